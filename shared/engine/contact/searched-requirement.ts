@@ -1,0 +1,19 @@
+import type { Measure } from '../../contracts';
+import type { LoopProbe } from './loop-probe';
+
+/** Why a point certainly fails. */
+export interface CertainFailure {
+  /** A pole has left through infinity: the leading coefficient has vanished or changed its sign. */
+  readonly throughInfinity: boolean;
+}
+
+/** A requirement as a search for failing points sees it. */
+export interface SearchedRequirement {
+  readonly measure: Measure;
+  readonly limit: number;
+  readonly probe: LoopProbe;
+  /** Negative where the requirement fails, in double precision: see `requirementValue`. */
+  value(point: ArrayLike<number>): number;
+  /** The failure, where it is certain. */
+  failsCertainly(point: ArrayLike<number>): CertainFailure | undefined;
+}

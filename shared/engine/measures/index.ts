@@ -1,0 +1,12 @@
+export { dampingRatio } from './damping-ratio';
+export { decayRate } from './decay-rate';
+export { DelayMargin } from './delay-margin';
+export { FrequencyGrid } from './frequency-grid';
+export { GainCrossovers } from './gain-crossovers';
+export { GainMargin } from './gain-margin';
+export { LoopMeasures, type MeasureValues } from './loop-measures';
+export { LoopSamples } from './loop-samples';
+export { ModulusConfirmation } from './modulus-confirmation';
+export { ModulusMargin } from './modulus-margin';
+export { PhaseMargin } from './phase-margin';
+export { ReturnDifference } from './return-difference';

@@ -1,0 +1,12 @@
+export { composeStudy } from './compose-study';
+export type {
+  ComposedMap,
+  ComposedParameter,
+  ComposedRating,
+  ComposedRequirement,
+  ComposedStudy,
+  ComposedTest,
+} from './composed-study';
+export { MOST_COLUMNS, MOST_STATES } from './loop-size';
+export { NominalValues } from './nominal-values';
+export { pointText } from './point-text';

@@ -1,0 +1,12 @@
+export * from './dyadic';
+export * from './elementary';
+export { powerOfTwo, scaleByPowerOfTwo } from './elementary/float-bits';
+export * from './evaluate';
+export * from './evaluate-interval';
+export * from './evaluate-exact';
+export * from './exact-polynomial';
+export * from './expression';
+export * from './parse';
+export * from './program';
+export * from './rational-function';
+export { nextDown, nextUp } from './interval/rounding';

@@ -1,0 +1,115 @@
+import type { MachineTemplate } from './template';
+
+/**
+ * Linearised about standing upright; x the travel of the axle, theta the tilt forwards, u the torque on the wheels:
+ *
+ * (Mb + m) x″ + m h theta″ + c x′ = u / R + push,
+ * m h x″ + (J + m h²) theta″ + d theta′ − m g0 h theta = −u + h push
+ */
+export const balancingCarrier: MachineTemplate = {
+  id: 'balancing-carrier',
+  label: 'Balancing carrier',
+  purpose:
+    'A carrier that balances its load above one axle: self-balancing personal vehicles and service carriers with a tall load.',
+  leavesOut: 'Turning, slip of the wheels, slopes, and tilts so large that the sine differs from the angle.',
+  parameters: [
+    {
+      id: 'm',
+      label: 'Payload',
+      symbol: 'm',
+      unit: 'kg',
+      nominal: 75,
+      low: 45,
+      high: 110,
+      minimum: 0,
+      kind: 'use',
+      hint: 'The rider or load that tilts, with the part of the carrier that tilts along.',
+    },
+    {
+      id: 'h',
+      label: 'Height of the centre of mass',
+      symbol: 'h',
+      unit: 'm',
+      nominal: 0.95,
+      low: 0.8,
+      high: 1.1,
+      minimum: 0,
+      kind: 'use',
+      hint: 'Of the payload, above the axle.',
+    },
+    {
+      id: 'J',
+      label: 'Moment of inertia of the payload',
+      symbol: 'J',
+      unit: 'kg m^2',
+      nominal: 8,
+      low: 5,
+      high: 12,
+      minimum: 0,
+      kind: 'use',
+      hint: 'About its own centre of mass, for tilting; often a definition such as 0.12*m*h^2.',
+    },
+    {
+      id: 'Mb',
+      label: 'Base',
+      symbol: 'M_b',
+      unit: 'kg',
+      nominal: 22,
+      minimum: 0,
+      hint: 'The part that rolls without tilting, plus the inertia of its wheels divided by R².',
+    },
+    {
+      id: 'R',
+      label: 'Wheel radius',
+      symbol: 'R',
+      unit: 'm',
+      nominal: 0.2,
+      low: 0.195,
+      high: 0.205,
+      minimum: 0.01,
+      kind: 'wear',
+      hint: 'Loaded radius.',
+    },
+    {
+      id: 'c',
+      label: 'Rolling friction',
+      symbol: 'c',
+      unit: 'N s/m',
+      nominal: 10,
+      low: 5,
+      high: 20,
+      minimum: 0,
+      kind: 'wear',
+      hint: 'Viscous, between base and ground.',
+    },
+    {
+      id: 'd',
+      label: 'Damping of the tilt',
+      symbol: 'd',
+      unit: 'N m s',
+      nominal: 1,
+      low: 0,
+      high: 2,
+      minimum: 0,
+      hint: 'Viscous, against the tilting motion; 0 is the careful choice.',
+    },
+  ],
+  machine: {
+    coordinates: ['x', 'theta'],
+    mass: [
+      ['Mb + m', 'm*h'],
+      ['m*h', 'J + m*h^2'],
+    ],
+    damping: [
+      ['c', '0'],
+      ['0', 'd'],
+    ],
+    stiffness: [
+      ['0', '0'],
+      ['0', '-m*g0*h'],
+    ],
+    inputs: { u: ['1/R', '-1'] },
+    disturbances: { push: ['1', 'h'] },
+    outputs: { x: { position: ['1', '0'] }, tilt: { position: ['0', '1'] } },
+  },
+};

@@ -1,0 +1,2 @@
+export type { MachineTemplate, TemplateParameter } from './template';
+export { checkTemplateParameters, expandMachine, templateOf, templates } from './templates';

@@ -1,0 +1,65 @@
+import type { MachineTemplate } from './template';
+
+/** (m0 + m) q″ + c q′ + k q = u + push */
+export const massSpringDamper: MachineTemplate = {
+  id: 'mass-spring-damper',
+  label: 'Mass on a spring and damper',
+  purpose:
+    'A carrying part that moves along one line on a spring and a damper, driven by one force: single-axis stages, seats and platforms.',
+  leavesOut: 'Dry friction, end stops and every motion across the line.',
+  parameters: [
+    {
+      id: 'm',
+      label: 'Payload',
+      symbol: 'm',
+      unit: 'kg',
+      nominal: 20,
+      low: 5,
+      high: 40,
+      minimum: 0,
+      kind: 'use',
+      hint: 'The mass that is put on; it moves with the carrying part.',
+    },
+    {
+      id: 'm0',
+      label: 'Moving mass, unladen',
+      symbol: 'm₀',
+      unit: 'kg',
+      nominal: 12,
+      minimum: 0,
+      hint: 'Everything that moves without a payload.',
+    },
+    {
+      id: 'k',
+      label: 'Stiffness',
+      symbol: 'k',
+      unit: 'N/m',
+      nominal: 8000,
+      low: 7200,
+      high: 8800,
+      minimum: 0,
+      hint: 'Spring between the carrying part and the ground.',
+    },
+    {
+      id: 'c',
+      label: 'Damping',
+      symbol: 'c',
+      unit: 'N s/m',
+      nominal: 150,
+      low: 100,
+      high: 200,
+      minimum: 0,
+      kind: 'wear',
+      hint: 'Viscous damping between the carrying part and the ground.',
+    },
+  ],
+  machine: {
+    coordinates: ['q'],
+    mass: [['m0 + m']],
+    damping: [['c']],
+    stiffness: [['k']],
+    inputs: { u: ['1'] },
+    disturbances: { push: ['1'] },
+    outputs: { q: { position: ['1'] } },
+  },
+};
