@@ -77,7 +77,8 @@ export class ExactEvaluator {
 
   private power(id: NodeId, base: NodeId, exponent: NodeId): RationalFunction | undefined {
     const value = this.values[exponent];
-    const whole = !this.dependent[exponent] && Math.floor(value) === value && Math.abs(value) <= LARGEST_POWER;
+    const whole =
+      !this.dependent[exponent] && Math.floor(value) === value && Math.abs(value) <= LARGEST_POWER;
     if (whole) return this.node(base)?.power(value);
     return this.dependent[id] ? undefined : RationalFunction.constant(this.packing, this.values[id]);
   }

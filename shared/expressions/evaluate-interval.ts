@@ -9,7 +9,10 @@ import type { Program } from './program';
  *
  * @param parameters ranges of all parameters in SI units, by parameter index
  */
-export function evaluateInterval(program: Program, parameters: readonly Interval[]): (Interval | DomainIssue)[] {
+export function evaluateInterval(
+  program: Program,
+  parameters: readonly Interval[],
+): (Interval | DomainIssue)[] {
   const { operations, left, right, constants } = program;
   const values: (Interval | DomainIssue)[] = [];
   operations.forEach((operation, id) => {

@@ -20,7 +20,8 @@ export interface ExponentPacking {
 
 export function exponentPacking(variables: number): ExponentPacking {
   const bits = Math.min(6, Math.floor(52 / Math.max(variables, 1)));
-  if (bits < 2) throw new ExpansionLimitError(`${variables} toleranced parameters are too many; at most 26 are read`);
+  if (bits < 2)
+    throw new ExpansionLimitError(`${variables} toleranced parameters are too many; at most 26 are read`);
   return { variables, bits, largest: powerOfTwoInteger(bits) - 1 };
 }
 
@@ -82,7 +83,8 @@ export class ExactPolynomial {
   get degrees(): readonly number[] {
     this.degreeCache ??= Array.from({ length: this.packing.variables }, (_, variable) => {
       let degree = 0;
-      for (const key of this.terms.keys()) degree = Math.max(degree, exponentOf(key, variable, this.packing.bits));
+      for (const key of this.terms.keys())
+        degree = Math.max(degree, exponentOf(key, variable, this.packing.bits));
       return degree;
     });
     return this.degreeCache;

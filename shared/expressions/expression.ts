@@ -18,7 +18,12 @@ export type Expression =
   | { readonly kind: 'number'; readonly value: number }
   | { readonly kind: 'name'; readonly name: string; readonly position: number }
   | { readonly kind: 'negate'; readonly operand: Expression }
-  | { readonly kind: 'call'; readonly name: FunctionName; readonly argument: Expression; readonly position: number }
+  | {
+      readonly kind: 'call';
+      readonly name: FunctionName;
+      readonly argument: Expression;
+      readonly position: number;
+    }
   | {
       readonly kind: 'binary';
       readonly operator: BinaryOperator;

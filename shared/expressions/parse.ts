@@ -31,7 +31,9 @@ class Parser {
     const rest = this.peek();
     if (rest.kind !== 'end') {
       throw new ExpressionError(
-        rest.text === ')' ? 'a closing bracket without an opening one' : `an operator is missing before "${rest.text}"`,
+        rest.text === ')'
+          ? 'a closing bracket without an opening one'
+          : `an operator is missing before "${rest.text}"`,
         rest.position,
       );
     }
@@ -63,7 +65,13 @@ class Parser {
       if (own === undefined || own < binding) break;
       this.next++;
       const right = this.expression(token.text === '^' ? SIGN_BINDING : own + 1);
-      left = { kind: 'binary', operator: token.text as BinaryOperator, left, right, position: token.position };
+      left = {
+        kind: 'binary',
+        operator: token.text as BinaryOperator,
+        left,
+        right,
+        position: token.position,
+      };
     }
     this.depth--;
     return left;
@@ -77,7 +85,9 @@ class Parser {
     if (token.text === '-') return { kind: 'negate', operand: this.expression(SIGN_BINDING) };
     if (token.text === '+') return this.expression(SIGN_BINDING);
     throw new ExpressionError(
-      token.kind === 'end' ? 'ends where a number or a name should follow' : `"${token.text}" has nothing before it`,
+      token.kind === 'end'
+        ? 'ends where a number or a name should follow'
+        : `"${token.text}" has nothing before it`,
       token.position,
     );
   }

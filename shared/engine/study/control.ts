@@ -77,7 +77,7 @@ function composeStateFeedback(
     const gain = compiler.scalar(scalar, [...path, 'gains', state]);
     const dots = machine.order === 2 && state.endsWith("'") ? 1 : 0;
     const unknown = machine.names.indexOf(dots === 1 ? state.slice(0, -1) : state);
-    return unknown < 0 ? [] : [{ unknown, dots: dots as 0 | 1, gain }];
+    return unknown < 0 ? [] : [{ unknown, dots, gain }];
   });
   const { integral } = law;
   return {
