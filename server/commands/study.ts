@@ -39,7 +39,8 @@ try {
   process.stdout.write(`${JSON.stringify(result, null, pretty ? 2 : 0)}\n`);
   if (require && result.bands.verdict !== 'holds') process.exitCode = NOT_HOLDING;
 } catch (error) {
-  if (error instanceof StudyFaultError) for (const { path, message } of error.faults) say(`${path}: ${message}`);
+  if (error instanceof StudyFaultError)
+    for (const { path, message } of error.faults) say(`${path}: ${message}`);
   else if (error instanceof UsageError) say(error.message);
   else throw error;
   process.exitCode = UNUSABLE;

@@ -21,7 +21,9 @@ export async function readInput(file: string): Promise<string> {
       if (length > LARGEST_STUDY + 1) break;
     }
   } catch (error) {
-    throw new UsageError(`${file}: cannot be read (${error instanceof Error ? error.message : String(error)})`);
+    throw new UsageError(
+      `${file}: cannot be read (${error instanceof Error ? error.message : String(error)})`,
+    );
   }
   return Buffer.concat(chunks).toString('utf8');
 }

@@ -100,7 +100,10 @@ class Analysis {
     const nominal = nominalAnswer(this.model.probe(law), space.nominal, stable);
     if (nominal === undefined) {
       throw new StudyFaultError([
-        { path: 'machine', message: 'the loop has no proper form at the nominal point: its leading coefficient is 0' },
+        {
+          path: 'machine',
+          message: 'the loop has no proper form at the nominal point: its leading coefficient is 0',
+        },
       ]);
     }
     const proof = search.proved ? 'proved' : 'sampled';
@@ -142,7 +145,10 @@ class Analysis {
     return new AnswerSearch(this.study, this.space, this.model, requirements, this.widest, this.work);
   }
 
-  private *orFailing(failing: Contact | undefined, search: () => Generator<void, TwoSided>): Generator<void, TwoSided> {
+  private *orFailing(
+    failing: Contact | undefined,
+    search: () => Generator<void, TwoSided>,
+  ): Generator<void, TwoSided> {
     return failing === undefined ? yield* search() : { ...NOTHING, contact: failing };
   }
 
@@ -156,8 +162,10 @@ class Analysis {
     const snap = (point: Float64Array): void => snapToUnits(this.study.parameters, this.space, point);
     if (failing !== undefined) return format.failing(worstPoint(failing, this.space, snap));
     const { contact, provedTo } = stretch;
-    if (contact !== undefined && contact.objective <= 1) return format.failing(worstPoint(contact, this.space, snap));
-    if (provedTo !== undefined && provedTo >= 1) return format.bands({ ...stretch, contact: undefined, openShare: undefined });
+    if (contact !== undefined && contact.objective <= 1)
+      return format.failing(worstPoint(contact, this.space, snap));
+    if (provedTo !== undefined && provedTo >= 1)
+      return format.bands({ ...stretch, contact: undefined, openShare: undefined });
     const bands = yield* search.bands();
     return bands.contact === undefined
       ? format.bands(bands)
@@ -173,7 +181,9 @@ class Analysis {
       let provedTo = largest.provedTo;
       if (requirements !== undefined) {
         const search = this.searchFor(requirements);
-        const answer = yield* this.orFailing(search.nominalContact(), () => search.payload(this.searchedUpTo));
+        const answer = yield* this.orFailing(search.nominalContact(), () =>
+          search.payload(this.searchedUpTo),
+        );
         const proof = search.proved ? 'proved' : 'sampled';
         const format = new AnswerFormat(parameters, this.space, proof, this.study.boundsUndecided);
         provedTo = format.largest(answer, this.searchedUpTo).provedTo;

@@ -1,10 +1,8 @@
-import type { Warning } from '../../contracts';
 import { BOX_LIMIT, contactSearch } from '../contact/contact-search';
 import type { Contact, TwoSided } from '../contact/contact';
-import type { RequirementProblem } from '../contact/requirement-problem';
 import { SampledRequirement } from '../contact/sampled-requirement';
 import { sampledSearch } from '../contact/sampled-search';
-import type { SearchedRequirement } from '../contact/searched-requirement';
+import type { ProvableRequirement, SearchedRequirement } from '../contact/searched-requirement';
 import {
   bandsFamily,
   payloadFamily,
@@ -25,8 +23,7 @@ export const LARGEST_STRETCH = 10;
 export class AnswerSearch {
   /** Whether answers are proved; otherwise they are sampled. */
   readonly proved: boolean;
-  readonly warnings: Warning[] = [];
-  private readonly problems: RequirementProblem[] = [];
+  private readonly problems: ProvableRequirement[] = [];
   private readonly sampled: SampledRequirement[];
 
   /** @throws ExpansionLimitError where the loop is too large to expand */
@@ -44,7 +41,10 @@ export class AnswerSearch {
       if (problem !== undefined) this.problems.push(problem);
     }
     this.proved = this.problems.length === ordered.length;
-    this.sampled = ordered.map(({ measure, limit, law }) => new SampledRequirement(measure, limit, model.probe(law)));
+    if (this.proved) this.problems.unshift(...model.divisorProblems(ordered[0].law, widest));
+    this.sampled = ordered.map(
+      ({ measure, limit, law }) => new SampledRequirement(measure, limit, model.probe(law)),
+    );
   }
 
   /** A contact at the nominal point itself, where a requirement is not kept there. */

@@ -21,7 +21,11 @@ export function inUnitUp({ unit }: ComposedParameter, value: number): number {
  * Moves a point to the nearest one that can be written in the parameters' units, so that what is reported is
  * exactly what was certified. Values at an end of a band are written already.
  */
-export function snapToUnits(parameters: readonly ComposedParameter[], space: SearchSpace, point: Float64Array): void {
+export function snapToUnits(
+  parameters: readonly ComposedParameter[],
+  space: SearchSpace,
+  point: Float64Array,
+): void {
   space.parameters.forEach((parameter, i) => {
     const { unit } = parameters[parameter];
     const { low, nominal, high } = space.variables[i];
@@ -39,6 +43,9 @@ export function witnessRecord(
   point: ArrayLike<number>,
 ): Record<string, number> {
   return Object.fromEntries(
-    space.parameters.map((parameter, i) => [parameters[parameter].id, inUnit(parameters[parameter], point[i])]),
+    space.parameters.map((parameter, i) => [
+      parameters[parameter].id,
+      inUnit(parameters[parameter], point[i]),
+    ]),
   );
 }

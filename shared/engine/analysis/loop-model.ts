@@ -1,5 +1,6 @@
 import { ExactEvaluator } from '../../expressions';
 import { LoopProbe } from '../contact/loop-probe';
+import { DivisorProblem } from '../contact/divisor-problem';
 import { RequirementProblem } from '../contact/requirement-problem';
 import { buildLoop } from '../loop/build-loop';
 import type { LoopMatrix } from '../loop/loop-matrix';
@@ -47,9 +48,20 @@ export class LoopModel {
    * A requirement made ready for the contact search.
    * @param widest largest absolute value that each variable takes in any search
    */
-  problem({ measure, limit, law }: ComposedRequirement, widest: readonly number[]): RequirementProblem | undefined {
+  problem(
+    { measure, limit, law }: ComposedRequirement,
+    widest: readonly number[],
+  ): RequirementProblem | undefined {
     const polynomial = this.polynomial(law);
     if (polynomial === undefined) return undefined;
     return new RequirementProblem(measure, limit, this.probe(law), polynomial, this.space.nominal, widest);
+  }
+
+  /** That no divisor of the loop's entries vanishes. */
+  divisorProblems(law: number, widest: readonly number[]): DivisorProblem[] {
+    const divisors = this.polynomial(law)?.divisors ?? [];
+    return divisors.map(
+      (divisor) => new DivisorProblem(divisor, this.probe(law), this.space.nominal, widest),
+    );
   }
 }

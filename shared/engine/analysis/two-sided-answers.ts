@@ -18,13 +18,20 @@ export class AnswerFormat {
   ) {}
 
   /** The requirement, the failing point and its frequency. */
-  private failure({ problem, point }: Contact): Pick<UpwardAnswer, 'requirement' | 'witness' | 'frequency' | 'reason'> {
+  private failure({
+    problem,
+    point,
+  }: Contact): Pick<UpwardAnswer, 'requirement' | 'witness' | 'frequency' | 'reason'> {
     const witness = witnessRecord(this.parameters, this.space, point);
     if (problem.failsCertainly(point)?.throughInfinity === true) {
       return { requirement: 'stability', witness, frequency: null, reason: THROUGH_INFINITY };
     }
     problem.probe.visit(point);
-    return { requirement: problem.measure, witness, frequency: limitingFrequency(problem.probe, problem.measure) };
+    return {
+      requirement: problem.measure,
+      witness,
+      frequency: limitingFrequency(problem.probe, problem.measure),
+    };
   }
 
   private payloadParameter(): ComposedParameter {

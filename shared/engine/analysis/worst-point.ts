@@ -6,14 +6,18 @@ import type { SearchSpace } from './search-variables';
  * From a failing point inside the bands, the worst one that a descent over the ends of the bands reaches: the value
  * of the requirement is least there. The failing point itself where nothing certified is worse.
  */
-export function worstPoint(contact: Contact, space: SearchSpace, snap: (point: Float64Array) => void): Contact {
+export function worstPoint(
+  contact: Contact,
+  space: SearchSpace,
+  snap: (point: Float64Array) => void,
+): Contact {
   const family = bandsFamily(space.variables);
   const { problem } = contact;
   const coordinates = new Float64Array(family.variables);
   const point = contact.point.slice();
   family.coordinatesOf(point, coordinates);
   let least = problem.value(point);
-  for (let improved = true; improved; ) {
+  for (let improved = true; improved;) {
     improved = false;
     for (const variable of family.free) {
       for (const end of [-1, 1]) {

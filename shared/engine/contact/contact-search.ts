@@ -1,19 +1,19 @@
 import type { Measure } from '../../contracts';
 import type { Contact as AnyContact, TwoSided as AnyTwoSided } from './contact';
 import { type BoxBudget, proveBox } from './prove-box';
-import type { RequirementProblem } from './requirement-problem';
 import type { SearchFamily } from './search-family';
+import type { ProvableRequirement } from './searched-requirement';
 import { WitnessSearch } from './witness-search';
 
-type Contact = AnyContact<RequirementProblem>;
-type TwoSided = AnyTwoSided<RequirementProblem>;
+type Contact = AnyContact<ProvableRequirement>;
+type TwoSided = AnyTwoSided<ProvableRequirement>;
 
 /** Most boxes of one requirement's search; beyond it the answer is undecided. */
 export const BOX_LIMIT = 20_000;
 
 export interface SearchContext {
   /** Problems, cheapest first. */
-  readonly problems: readonly RequirementProblem[];
+  readonly problems: readonly ProvableRequirement[];
   /** Brings a point to one that can be written in the parameters' units. */
   readonly snap: (point: Float64Array) => void;
   /** Total of boxes, for the report. */
@@ -40,7 +40,8 @@ export function* contactSearch(
     const witnesses = new WitnessSearch(problem, family);
     const coarse = witnesses.coarse(limit);
     const first = coarse && witnesses.certified(coarse, context.snap);
-    if (first !== undefined) contact = better(contact, { objective: family.objectiveOf(first), point: first, problem });
+    if (first !== undefined)
+      contact = better(contact, { objective: family.objectiveOf(first), point: first, problem });
     const budget: BoxBudget = { boxes: 0, limit: context.boxLimit };
     for (;;) {
       const clip = contact === undefined ? family.reach : contact.objective - family.gapAt(contact.objective);
@@ -53,7 +54,8 @@ export function* contactSearch(
       context.work.boxes += budget.boxes - before;
       if (outcome.kind === 'contact') {
         contact = improved(context, family, problem, outcome.point, contact);
-        if (contact.objective <= 0) return { provedTo: undefined, contact, openShare: undefined, openMeasure: undefined };
+        if (contact.objective <= 0)
+          return { provedTo: undefined, contact, openShare: undefined, openMeasure: undefined };
         continue;
       }
       if (outcome.kind === 'open' && (open === undefined || outcome.objective < open.objective)) {
@@ -73,7 +75,7 @@ function better(old: Contact | undefined, found: Contact): Contact {
 function improved(
   context: SearchContext,
   family: SearchFamily,
-  problem: RequirementProblem,
+  problem: ProvableRequirement,
   point: Float64Array,
   old: Contact | undefined,
 ): Contact {
@@ -87,7 +89,9 @@ function improved(
   const itself = problem.failsCertainly(snapped) === undefined ? point : snapped;
   const own: Contact = { objective: family.objectiveOf(itself), point: itself, problem };
   const best =
-    certified === undefined ? own : better(own, { objective: family.objectiveOf(certified), point: certified, problem });
+    certified === undefined
+      ? own
+      : better(own, { objective: family.objectiveOf(certified), point: certified, problem });
   return better(old, best);
 }
 
@@ -104,7 +108,12 @@ function conclude(
   const bound = Math.max(clip, zeroProved ? 0 : clip);
   // Without a failing point an open box leaves everything beyond it undecided, at objective 0 the whole verdict.
   if (open !== undefined && (contact === undefined || open.objective < bound)) {
-    return { provedTo: Math.max(0, open.objective), contact, openShare: open.share, openMeasure: open.measure };
+    return {
+      provedTo: Math.max(0, open.objective),
+      contact,
+      openShare: open.share,
+      openMeasure: open.measure,
+    };
   }
   return { provedTo: bound, contact, openShare: undefined, openMeasure: undefined };
 }

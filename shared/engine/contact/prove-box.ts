@@ -1,7 +1,7 @@
 import type { Range } from '../polynomial/bernstein-form';
 import { BoxHeap, type OpenBox } from './box-heap';
-import type { RequirementProblem } from './requirement-problem';
 import type { SearchFamily } from './search-family';
+import type { ProvableRequirement } from './searched-requirement';
 
 /** How the search of one box ended. */
 export type BoxOutcome =
@@ -33,7 +33,7 @@ const DESCENT_ROUNDS = 90;
  * or show progress at any point; the course does not depend on when it is resumed.
  */
 export function* proveBox(
-  problem: RequirementProblem,
+  problem: ProvableRequirement,
   family: SearchFamily,
   ranges: readonly Range[],
   budget: BoxBudget,
@@ -58,7 +58,7 @@ class BoxSearch {
   private openShare = 0;
 
   constructor(
-    private readonly problem: RequirementProblem,
+    private readonly problem: ProvableRequirement,
     private readonly family: SearchFamily,
     private readonly ranges: readonly Range[],
     private readonly budget: BoxBudget,

@@ -7,7 +7,7 @@ import type { LoopPolynomial } from '../polynomial/loop-polynomial';
 import { countOutside, countOutsideBothHalves } from '../polynomial/pole-count';
 import type { LoopProbe } from './loop-probe';
 import { requirementValue } from './requirement-value';
-import type { CertainFailure, SearchedRequirement } from './searched-requirement';
+import type { CertainFailure, ProvableRequirement } from './searched-requirement';
 
 /** Relative steps beyond a measured margin at which a failure is certified, from clear to faint. */
 const STEPS_BEYOND = [1e-4, 1e-6, 1e-8];
@@ -16,7 +16,7 @@ const STEPS_BEYOND = [1e-4, 1e-6, 1e-8];
  * One requirement of one loop, ready to be searched: its boundary polynomials for exclusion, its value at points in
  * double precision for steering, and exact counts of poles for certificates.
  */
-export class RequirementProblem implements SearchedRequirement {
+export class RequirementProblem implements ProvableRequirement {
   readonly polynomials: BoundaryPolynomials;
   private readonly form: BoundaryForm;
   private readonly nominalSign: bigint;
@@ -62,7 +62,10 @@ export class RequirementProblem implements SearchedRequirement {
 
   private countPoles({ broken, returned }: ExactPoint): number | undefined {
     const { measure, limit, degree, cosine } = this.form;
-    const form = measure === 'dampingRatio' || measure === 'decayRate' ? this.form : boundaryForm('stability', limit, degree);
+    const form =
+      measure === 'dampingRatio' || measure === 'decayRate'
+        ? this.form
+        : boundaryForm('stability', limit, degree);
     return countOutside(form.sheetsAt(broken, returned)[0], cosine);
   }
 
@@ -132,7 +135,8 @@ function entersDisc({ broken, returned }: ExactPoint, beta: number, omega: numbe
   const frequency = toDyadic(omega);
   const radius = toDyadic(beta);
   const left = squaredModulus(closed, frequency.mantissa, frequency.exponent);
-  const right = squaredModulus(broken, frequency.mantissa, frequency.exponent) * radius.mantissa * radius.mantissa;
+  const right =
+    squaredModulus(broken, frequency.mantissa, frequency.exponent) * radius.mantissa * radius.mantissa;
   // Both moduli carry the same scale; β² adds 2·exponent.
   const shift = 2 * radius.exponent;
   return shift >= 0 ? left < right << BigInt(shift) : left << BigInt(-shift) < right;

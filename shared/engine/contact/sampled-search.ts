@@ -30,7 +30,8 @@ export function* sampledSearch(
       const refined = witnesses.refine({ objective, coordinates: at });
       const certified = witnesses.certified(refined, snap) ?? point.slice();
       const found = family.objectiveOf(certified);
-      if (contact === undefined || found < contact.objective) contact = { objective: found, point: certified, problem };
+      if (contact === undefined || found < contact.objective)
+        contact = { objective: found, point: certified, problem };
     };
     const coarse = witnesses.coarse(contact?.objective ?? family.reach, CORNER_LEVELS);
     if (coarse !== undefined) {
@@ -39,7 +40,8 @@ export function* sampledSearch(
     }
     for (let index = 1; index <= SAMPLES; index++) {
       haltonPoint(index, fraction);
-      const limit = contact === undefined ? family.reach : contact.objective - family.gapAt(contact.objective);
+      const limit =
+        contact === undefined ? family.reach : contact.objective - family.gapAt(contact.objective);
       if (limit < 0) break;
       for (let i = 0; i < coordinates.length; i++) coordinates[i] = 2 * fraction[i + 1] - 1;
       const objective = fraction[0] * limit;
@@ -54,7 +56,9 @@ export function* sampledSearch(
       yield;
     }
   }
-  if (contact === undefined) return { provedTo: family.reach, contact, openShare: undefined, openMeasure: undefined };
-  const bound = contact.objective <= 0 ? undefined : Math.max(0, contact.objective - family.gapAt(contact.objective));
+  if (contact === undefined)
+    return { provedTo: family.reach, contact, openShare: undefined, openMeasure: undefined };
+  const bound =
+    contact.objective <= 0 ? undefined : Math.max(0, contact.objective - family.gapAt(contact.objective));
   return { provedTo: bound, contact, openShare: undefined, openMeasure: undefined };
 }

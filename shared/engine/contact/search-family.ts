@@ -61,7 +61,8 @@ export function payloadFamily(
   return {
     variables: variables.length,
     reach,
-    gapAt: (objective) => RELATIVE_GAP * Math.max(Math.abs(valueAt(objective)), Math.abs(nominal), 1e-9 * reach),
+    gapAt: (objective) =>
+      RELATIVE_GAP * Math.max(Math.abs(valueAt(objective)), Math.abs(nominal), 1e-9 * reach),
     rangesAt: (objective) =>
       variables.map(({ low, high }, i) => {
         if (i !== payload) return { low, high };

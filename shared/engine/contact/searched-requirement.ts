@@ -1,4 +1,5 @@
 import type { Measure } from '../../contracts';
+import type { BoundaryPolynomials } from '../polynomial/bernstein-form';
 import type { LoopProbe } from './loop-probe';
 
 /** Why a point certainly fails. */
@@ -16,4 +17,11 @@ export interface SearchedRequirement {
   value(point: ArrayLike<number>): number;
   /** The failure, where it is certain. */
   failsCertainly(point: ArrayLike<number>): CertainFailure | undefined;
+}
+
+/** A requirement that can be proved on boxes. */
+export interface ProvableRequirement extends SearchedRequirement {
+  readonly polynomials: BoundaryPolynomials;
+  /** True when an exact count shows the requirement's poles inside at this point. */
+  isInside(point: ArrayLike<number>): boolean;
 }

@@ -45,7 +45,8 @@ class LoopAssembly {
       this.addRow(row);
     });
     const columnDegrees = new Array<number>(this.columns).fill(0);
-    for (const { column, power } of this.entries) columnDegrees[column] = Math.max(columnDegrees[column], power);
+    for (const { column, power } of this.entries)
+      columnDegrees[column] = Math.max(columnDegrees[column], power);
     return {
       program: this.program,
       size: this.columns,
@@ -92,7 +93,10 @@ class LoopAssembly {
         const error = this.negated(this.measuredOutput(law.output));
         const states = law.a.map(() => this.column());
         law.a.forEach((row, i) => {
-          const coupling = row.map((node, j) => ({ ...this.term(states[j]), node: this.program.negate(node) }));
+          const coupling = row.map((node, j) => ({
+            ...this.term(states[j]),
+            node: this.program.negate(node),
+          }));
           const drive = this.scale(error, this.program.negate(law.b[i]));
           this.addRow([[{ ...this.term(states[i]), power: 1 }], coupling, drive]);
         });
@@ -103,7 +107,10 @@ class LoopAssembly {
           .filter(({ gain }) => !this.isZero(gain))
           .map(({ unknown, dots, gain }) => {
             const state: Signal = [{ column: unknown, power: dots, node: one }];
-            return this.scale(this.throughSensor(`state ${unknown} ${dots}`, state), this.program.negate(gain));
+            return this.scale(
+              this.throughSensor(`state ${unknown} ${dots}`, state),
+              this.program.negate(gain),
+            );
           });
         if (law.integral !== undefined && !this.isZero(law.integral.gain)) {
           const integral = this.filter([zero, one], this.measuredOutput(law.integral.output));
@@ -158,7 +165,10 @@ class LoopAssembly {
    * A new column ξ with denominator(s) ξ = input (controllable canonical form): what follows reads ξ and its
    * derivatives, so that the highest derivative stands in this row alone.
    */
-  private filter(denominator: readonly NodeId[], input: Signal): { column: number; power: number; node: NodeId } {
+  private filter(
+    denominator: readonly NodeId[],
+    input: Signal,
+  ): { column: number; power: number; node: NodeId } {
     const column = this.column();
     const own = denominator.map((node, power) => ({ column, power, node }));
     this.addRow([own, this.negated(input)]);

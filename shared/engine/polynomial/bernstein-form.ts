@@ -63,7 +63,9 @@ export class BoundaryPolynomials {
       sheets.forEach((sheet, index) => {
         // A disc's two polynomials are stored one behind the other, sheets within one polynomial.
         const start =
-          form.discRadius === undefined ? row + (index * kernel.size) / form.sheets : row + index * 2 * kernel.size;
+          form.discRadius === undefined
+            ? row + (index * kernel.size) / form.sheets
+            : row + index * 2 * kernel.size;
         sheet.re.forEach((value, k) => {
           const exponent = shift + slope * k - top;
           this.power[start + k] = fromDyadic(value, exponent);
@@ -187,7 +189,11 @@ function chartSlope(polynomial: LoopPolynomial, nominal: ArrayLike<number>): num
  * b_i = Σ_k c_k e_k(high × i, low × (D − i)) / binom(D, k), row-major (D + 1)×(D + 1).
  * `bounds` is the same with absolute values, from which the rounding error follows also where terms cancel.
  */
-function bernsteinConversion(degree: number, low: number, high: number): { weights: Float64Array; bounds: Float64Array } {
+function bernsteinConversion(
+  degree: number,
+  low: number,
+  high: number,
+): { weights: Float64Array; bounds: Float64Array } {
   const order = degree + 1;
   const weights = new Float64Array(order * order);
   const bounds = new Float64Array(order * order);

@@ -159,7 +159,8 @@ export class BernsteinKernel {
         const y = sine * box[size + i];
         const dx = box[second + i];
         const dy = box[second + size + i];
-        const disc = beta * (Math.sqrt(dx * dx + dy * dy) + box[radii + columns + k]) * (1 + 8 * UNIT_ROUNDOFF);
+        const disc =
+          beta * (Math.sqrt(dx * dx + dy * dy) + box[radii + columns + k]) * (1 + 8 * UNIT_ROUNDOFF);
         const slack = box[radii + k] + 4 * UNIT_ROUNDOFF * (Math.abs(x) + Math.abs(y) + disc);
         if (!(x + y - disc > slack * (1 + 1e-6))) return false;
       }

@@ -167,7 +167,15 @@ function rayPowers(re: bigint, im: bigint, degree: number): ComplexCoefficients 
 }
 
 /** Coefficients of a(ω · direction), where the direction's powers carry 2^(bits·k): all are brought to 2^(bits·n). */
-function onRay(a: readonly bigint[], powers: ComplexCoefficients, bits: number, degree: number): ComplexCoefficients {
+function onRay(
+  a: readonly bigint[],
+  powers: ComplexCoefficients,
+  bits: number,
+  degree: number,
+): ComplexCoefficients {
   const scaled = a.map((value, k) => value << BigInt(bits * (degree - k)));
-  return { re: scaled.map((value, k) => value * powers.re[k]), im: scaled.map((value, k) => value * powers.im[k]) };
+  return {
+    re: scaled.map((value, k) => value * powers.re[k]),
+    im: scaled.map((value, k) => value * powers.im[k]),
+  };
 }

@@ -35,7 +35,7 @@ export function exactArgumentChange({ re, im }: ComplexCoefficients, degree: num
 /** Sign changes of the chain R, I, … at 0 less those at ∞. */
 function cauchyIndex(real: bigint[], imaginary: bigint[]): number | undefined {
   const chain = [real];
-  for (let next = imaginary; next.length > 0; ) {
+  for (let next = imaginary; next.length > 0;) {
     chain.push(next);
     next = negatedRemainder(chain[chain.length - 2], next);
   }
@@ -66,7 +66,9 @@ function negatedRemainder(f: readonly bigint[], g: readonly bigint[]): bigint[] 
     // rest · |lead| − sign · top · x^shift · g: a positive multiple of rest modulo g.
     const factor = positive ? top : -top;
     const scale = positive ? lead : -lead;
-    rest = trim(rest.map((value, k) => value * scale - (k >= shift ? factor * g[k - shift] : 0n)).slice(0, -1));
+    rest = trim(
+      rest.map((value, k) => value * scale - (k >= shift ? factor * g[k - shift] : 0n)).slice(0, -1),
+    );
   }
   return primitive(rest.map((value) => -value));
 }

@@ -25,6 +25,8 @@ export interface LoopPolynomial {
   readonly exponent: number;
   readonly broken: readonly ExactTerm[];
   readonly returned: readonly ExactTerm[];
+  /** Divisors of the entries that depend on a variable: where one vanishes the loop is not defined. */
+  readonly divisors: readonly ExactPolynomial[];
 }
 
 /** Most products of two terms that one expansion may take (about three seconds on a small machine). */
@@ -57,7 +59,11 @@ interface RowEntry {
  * @returns undefined where a variable enters otherwise than rationally
  * @throws ExpansionLimitError beyond MAXIMUM_TERM_PRODUCTS
  */
-export function expandLoop(loop: LoopMatrix, evaluator: ExactEvaluator, brokenLaw: number): LoopPolynomial | undefined {
+export function expandLoop(
+  loop: LoopMatrix,
+  evaluator: ExactEvaluator,
+  brokenLaw: number,
+): LoopPolynomial | undefined {
   const rows: RowEntry[][] = Array.from({ length: loop.size }, () => []);
   for (const { row, column, power, node, law } of loop.entries) {
     const value = evaluator.node(node);
@@ -65,7 +71,8 @@ export function expandLoop(loop: LoopMatrix, evaluator: ExactEvaluator, brokenLa
     rows[row].push({ column, power, broken: law >= 0 && law === brokenLaw, value });
   }
   const variables = evaluator.packing.variables;
-  const cleared = rows.map((row) => clearRow(row));
+  const divisors = new Map<string, ExactPolynomial>();
+  const cleared = rows.map((row) => clearRow(row, divisors));
   const radices = packingRadices(cleared, variables);
   let exponent = 0;
   const packed = cleared.map((row) => {
@@ -74,7 +81,12 @@ export function expandLoop(loop: LoopMatrix, evaluator: ExactEvaluator, brokenLa
     return result.row;
   });
   const determinant = expandByMinors(packed, loop.size);
-  return { variables, exponent, ...separate(determinant, radices, variables) };
+  return {
+    variables,
+    exponent,
+    divisors: [...divisors.values()],
+    ...separate(determinant, radices, variables),
+  };
 }
 
 interface ClearedEntry {
@@ -84,11 +96,14 @@ interface ClearedEntry {
   readonly value: ExactPolynomial;
 }
 
-/** Multiplies a row by the least common multiple of its denominators. */
-function clearRow(row: readonly RowEntry[]): ClearedEntry[] {
+/** Multiplies a row by the least common multiple of its denominators, which are noted in `divisors`. */
+function clearRow(row: readonly RowEntry[], divisors: Map<string, ExactPolynomial>): ClearedEntry[] {
   let common: Denominator = new Map();
   for (const { value } of row) common = leastCommonMultiple(common, value.denominator);
-  return row.map((entry) => ({ ...entry, value: entry.value.over(common) })).filter(({ value }) => !value.isZero);
+  for (const [key, { factor }] of common) if (factor.constantValue === undefined) divisors.set(key, factor);
+  return row
+    .map((entry) => ({ ...entry, value: entry.value.over(common) }))
+    .filter(({ value }) => !value.isZero);
 }
 
 /**
@@ -108,11 +123,15 @@ function packingRadices(rows: readonly (readonly ClearedEntry[])[], variables: n
   }
   let range = 1;
   for (const radix of radices) range *= radix;
-  if (range > 4e15) throw new ExpansionLimitError('the closed loop has too many toleranced parameters of high degree');
+  if (range > 4e15)
+    throw new ExpansionLimitError('the closed loop has too many toleranced parameters of high degree');
   return radices;
 }
 
-function packRow(row: readonly ClearedEntry[], radices: readonly number[]): { row: PackedRow; exponent: number } {
+function packRow(
+  row: readonly ClearedEntry[],
+  radices: readonly number[],
+): { row: PackedRow; exponent: number } {
   let exponent = Infinity;
   for (const { value } of row) exponent = Math.min(exponent, value.exponent);
   if (row.length === 0) exponent = 0;
@@ -134,7 +153,11 @@ function packRow(row: readonly ClearedEntry[], radices: readonly number[]): { ro
   }
   const entries = [...byColumn].map(([column, terms]) => {
     const kept = [...terms].filter(([, coefficient]) => coefficient !== 0n);
-    return { column, keys: kept.map(([key]) => key), coefficients: kept.map(([, coefficient]) => coefficient) };
+    return {
+      column,
+      keys: kept.map(([key]) => key),
+      coefficients: kept.map(([, coefficient]) => coefficient),
+    };
   });
   return { row: { entries: entries.filter(({ keys }) => keys.length > 0) }, exponent };
 }
@@ -204,7 +227,12 @@ function rowOrder(rows: readonly PackedRow[], size: number): number[] {
 }
 
 /** Columns that occur in no row after `step`: every surviving set must hold them. */
-function closedColumns(rows: readonly PackedRow[], order: readonly number[], step: number, size: number): number {
+function closedColumns(
+  rows: readonly PackedRow[],
+  order: readonly number[],
+  step: number,
+  size: number,
+): number {
   let later = 0;
   for (let i = step + 1; i < order.length; i++) {
     for (const { column } of rows[order[i]].entries) later |= 1 << column;

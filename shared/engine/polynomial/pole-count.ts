@@ -30,7 +30,10 @@ export function countOutside(coefficients: ComplexCoefficients, dampingRatio = 0
  * The same for a complex polynomial p and the imaginary axis: both halves of the axis are walked, the second one by
  * the conjugate polynomial. outside = (n π − Δ⁺ − Δ⁻)/(2π).
  */
-export function countOutsideBothHalves(upper: ComplexCoefficients, lower: ComplexCoefficients): number | undefined {
+export function countOutsideBothHalves(
+  upper: ComplexCoefficients,
+  lower: ComplexCoefficients,
+): number | undefined {
   const above = argumentChange(upper);
   const below = argumentChange(lower);
   if (above === undefined || below === undefined) return undefined;
@@ -54,7 +57,8 @@ function argumentChange(coefficients: ComplexCoefficients): Turn | undefined {
   if (degree === 0) return { degree, change: 0 };
   const kernel = new BernsteinKernel({ degrees: [], degree, sheets: 1, discRadius: undefined });
   const change =
-    walk(kernel, bernsteinCurve(coefficients, kernel), MAXIMUM_DEPTH) ?? exactArgumentChange(coefficients, degree);
+    walk(kernel, bernsteinCurve(coefficients, kernel), MAXIMUM_DEPTH) ??
+    exactArgumentChange(coefficients, degree);
   return change === undefined ? undefined : { degree, change };
 }
 

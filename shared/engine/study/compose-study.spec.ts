@@ -220,7 +220,7 @@ describe('composeStudy', () => {
   it('does without control', () => {
     const { control, actuator, ...rest } = studyOf(LIFT_TABLE);
     expect([control, actuator]).not.toContain(undefined);
-    const study = composeStudy(rest as Study);
+    const study = composeStudy(rest);
     expect(study.loop.laws).toEqual([]);
     expect(study.requirements).toEqual([
       { measure: 'stability', limit: 0, law: -1 },

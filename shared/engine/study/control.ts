@@ -75,7 +75,7 @@ function composeStateFeedback(
 ): ComposedStateFeedback {
   const gains = Object.entries(law.gains).flatMap(([state, scalar]) => {
     const gain = compiler.scalar(scalar, [...path, 'gains', state]);
-    const dots = machine.order === 2 && state.endsWith("'") ? 1 : 0;
+    const dots: 0 | 1 = machine.order === 2 && state.endsWith("'") ? 1 : 0;
     const unknown = machine.names.indexOf(dots === 1 ? state.slice(0, -1) : state);
     return unknown < 0 ? [] : [{ unknown, dots, gain }];
   });

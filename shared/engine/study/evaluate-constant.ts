@@ -49,5 +49,6 @@ export const DOMAIN_REASONS = {
   root: 'root of a negative number',
   logarithm: 'logarithm of a number that is not above 0',
   power: 'power of a negative number with an exponent that is not whole',
+  powerOfZero: 'power of 0 with an exponent that may be negative',
   tangent: 'pole of tan',
 } as const;

@@ -16,6 +16,12 @@ export class FaultList {
     this.found.set(`${fault.path}: ${message}`, fault);
   }
 
+  /** Whether something at this path has a fault already. */
+  has(path: readonly PathPart[]): boolean {
+    const text = formatPath(path);
+    return [...this.found.values()].some((fault) => fault.path === text);
+  }
+
   addAll(faults: readonly Fault[]): void {
     for (const fault of faults) this.found.set(`${fault.path}: ${fault.message}`, fault);
   }

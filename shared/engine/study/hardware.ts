@@ -85,8 +85,8 @@ export function checkTimes(times: readonly HardwareTime[], nominal: NominalValue
   for (const { path, quantity, node } of times) {
     const value = nominal.constant(node);
     // What is not finite has its fault as an expression.
-    if (value === undefined || !Number.isFinite(value)) continue;
-    const fault = hardwareFault(quantity, value);
-    if (fault !== undefined) faults.add(path, fault);
+    const fault = value === undefined || !Number.isFinite(value) ? undefined : hardwareFault(quantity, value);
+    // An expression that cannot be read stands as 0 here.
+    if (fault !== undefined && !faults.has(path)) faults.add(path, fault);
   }
 }

@@ -15,7 +15,11 @@ export interface MapMeasureContext {
 }
 
 /** The law at which a map's margin is read: that of the first requirement of this measure, else the first law. */
-export function lawOfMeasure(measure: MapMeasure, requirements: readonly ComposedRequirement[], laws: number): number {
+export function lawOfMeasure(
+  measure: MapMeasure,
+  requirements: readonly ComposedRequirement[],
+  laws: number,
+): number {
   const named = requirements.find((requirement) => requirement.measure === measure);
   return named?.law ?? (laws > 0 ? 0 : -1);
 }

@@ -67,7 +67,9 @@ export function* sweepMap(
 }
 
 function nodes(from: number, to: number, count: number): number[] {
-  return Array.from({ length: count }, (_, i) => (i === count - 1 ? to : from + (i * (to - from)) / (count - 1)));
+  return Array.from({ length: count }, (_, i) =>
+    i === count - 1 ? to : from + (i * (to - from)) / (count - 1),
+  );
 }
 
 /** Parameter vectors with the others at nominal, at corners of their bands, and at low-discrepancy points. */

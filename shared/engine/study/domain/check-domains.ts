@@ -1,17 +1,18 @@
-import { ExpansionLimitError, type Program } from '../../../expressions';
+import { evaluateInterval, ExpansionLimitError, type NodeId, type Program } from '../../../expressions';
+import { isDomainIssue } from '../../../expressions/interval';
 import type { ComposedParameter } from '../composed-study';
 import type { NodeSite } from '../expression-compiler';
 import type { FaultList } from '../fault-list';
 import type { NominalValues } from '../nominal-values';
 import { pointText } from '../point-text';
 import type { BandBox } from './band-box';
-import { decideByIntervals, isMetByIntervals } from './decide-by-intervals';
+import { IntervalSearch } from './decide-by-intervals';
 import { decideExactly } from './decide-exactly';
 import { exactSubject } from './exact-subject';
-import { coneOf } from './interval-values';
 import { operationConditions } from './partial-operations';
 import { isBroken, MET, OPEN, subjectNodes, type Decision, type SignCondition } from './sign-condition';
 import { coefficientCount } from './scaled-bernstein';
+import { parametersBelow, subProgram } from './sub-program';
 
 /** Largest tensor of coefficients that is worth forming; beyond it intervals decide. */
 const MOST_EXACT_COEFFICIENTS = 5000;
@@ -36,24 +37,27 @@ export interface DomainStudy {
 export function checkDomains(study: DomainStudy, faults: FaultList): boolean {
   const { program, partial, nominal, roots } = study;
   const judge = new ConditionJudge(study);
-  const before = faults.count;
+  let broken = false;
   let undecided = false;
   const judgeAll = (conditions: readonly SignCondition[]): void => {
     for (const condition of conditions) {
       const decision = judge.decide(condition, faults);
-      if (decision.outcome === 'broken')
-        faults.add(condition.path, condition.message(judge.shown(condition, decision.point)));
-      else if (decision.outcome === 'open') undecided = true;
+      if (decision.outcome === 'open') undecided = true;
+      if (decision.outcome !== 'broken') continue;
+      broken = true;
+      faults.add(condition.path, condition.message(judge.shown(condition, decision.point)));
     }
   };
-  judgeAll(partial.flatMap((site) => operationConditions(program, site, nominal)));
-  // Where an entry is not defined, a determinant made of it means nothing.
-  if (faults.count > before) return undecided;
+  const mayBeNegative = (node: NodeId): boolean => judge.mayBeNegative(node);
+  judgeAll(partial.flatMap((site) => operationConditions(program, site, nominal, mayBeNegative)));
+  // Where an entry is not defined, what is made of it means nothing.
+  if (broken) return undecided;
   for (const { node, path } of roots) {
-    if (!Number.isFinite(nominal.value(node)))
-      faults.add(path, 'is too large for a number at the nominal values');
+    if (Number.isFinite(nominal.value(node))) continue;
+    broken = true;
+    faults.add(path, 'is too large for a number at the nominal values');
   }
-  if (faults.count === before) judgeAll(study.conditions);
+  if (!broken) judgeAll(study.conditions);
   return undecided;
 }
 
@@ -75,22 +79,30 @@ class ConditionJudge {
       high: variables.map((index) => parameters[index].high),
     };
     const nominal = variables.map((index) => this.nominals[index]);
-    const where = { nominals: this.nominals, variables, box };
+    const byIntervals = new IntervalSearch(program, condition, { nominals: this.nominals, variables, box });
     // One look at the whole box is enough for most conditions, and cheaper than an expansion.
-    if (isMetByIntervals(program, condition, where)) return MET;
-    const byIntervals = (): Decision => decideByIntervals(program, condition, where);
+    if (byIntervals.isMetOnWhole()) return MET;
     try {
       const polynomial = exactSubject(program, condition.subject, condition.sign, this.nominals, variables);
-      if (polynomial === undefined) return byIntervals();
-      if (coefficientCount(polynomial) > MOST_EXACT_COEFFICIENTS) return byIntervals();
+      if (polynomial === undefined) return byIntervals.decide();
+      if (coefficientCount(polynomial) > MOST_EXACT_COEFFICIENTS) return byIntervals.decide();
       return decideExactly(polynomial, condition.sign, box, nominal);
     } catch (error) {
       if (error instanceof RangeError) return OPEN;
       if (!(error instanceof ExpansionLimitError)) throw error;
-      if (condition.subject.kind === 'node') return byIntervals();
+      if (condition.subject.kind === 'node') return byIntervals.decide();
       faults.add(['machine'], `is too large: ${error.message}`);
       return MET;
     }
+  }
+
+  /** Whether intervals cannot show that a node is at least 0 everywhere in the bands. */
+  mayBeNegative(node: NodeId): boolean {
+    const { parameters, program } = this.study;
+    const sub = subProgram(program, [node]);
+    const values = evaluateInterval(sub.program, parameters);
+    const value = values[values.length - 1];
+    return isDomainIssue(value) || value.low < 0;
   }
 
   /** The point of a decision, as it stands in a message: the parameters that enter. */
@@ -107,10 +119,6 @@ class ConditionJudge {
 
   private variablesOf({ subject }: SignCondition): number[] {
     const { program, parameters } = this.study;
-    const entering = new Set<number>();
-    for (const id of coneOf(program, subjectNodes(subject))) {
-      if (program.operations[id] === 'parameter') entering.add(program.left[id]);
-    }
-    return [...entering].filter((index) => parameters[index].hasBand).sort((a, b) => a - b);
+    return parametersBelow(program, subjectNodes(subject)).filter((index) => parameters[index].hasBand);
   }
 }

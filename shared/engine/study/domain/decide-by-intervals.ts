@@ -1,8 +1,8 @@
-import type { NodeId, Program } from '../../../expressions';
-import { cos, pointInterval, type Interval } from '../../../expressions/interval';
+import { evaluateInterval, type NodeId, type Program } from '../../../expressions';
+import { cos, isDomainIssue, pointInterval, type Interval } from '../../../expressions/interval';
 import { centreOf, cornersOf, halves, pointOfSignChange, type BandBox } from './band-box';
-import { intervalDeterminant } from './interval-determinant';
-import { coneOf, encloseNodes } from './interval-values';
+import { ANY, intervalDeterminant } from './interval-determinant';
+import { subProgram } from './sub-program';
 import {
   isBroken,
   MET,
@@ -39,32 +39,26 @@ export interface BandPoint {
  * Branch and bound: interval arithmetic excludes boxes in which the condition cannot fail; points at which it fails
  * for certain, or between which a continuous quantity changes its sign, refute it.
  */
-export function decideByIntervals(program: Program, condition: SignCondition, where: BandPoint): Decision {
-  return new IntervalSearch(program, condition, where).decide();
-}
-
-/** Whether one look at the whole box shows that the condition holds. */
-export function isMetByIntervals(program: Program, condition: SignCondition, where: BandPoint): boolean {
-  return new IntervalSearch(program, condition, where).isMetOnWhole();
-}
-
-class IntervalSearch {
-  private readonly cone: readonly NodeId[];
+export class IntervalSearch {
+  private readonly program: Program;
+  private readonly placeOf: ReadonlyMap<NodeId, NodeId>;
   private readonly parameters: Interval[];
-  private readonly values: Interval[] = [];
   private positive: readonly number[] | undefined;
   private negative: readonly number[] | undefined;
   private jumps = 0;
 
   constructor(
-    private readonly program: Program,
+    program: Program,
     private readonly condition: SignCondition,
     private readonly where: BandPoint,
   ) {
-    this.cone = coneOf(program, subjectNodes(condition.subject));
+    const { program: own, placeOf } = subProgram(program, subjectNodes(condition.subject));
+    this.program = own;
+    this.placeOf = placeOf;
     this.parameters = where.nominals.map(pointInterval);
   }
 
+  /** Whether one look at the whole box shows that the condition holds. */
   isMetOnWhole(): boolean {
     const { low, high } = this.where.box;
     return isMet(this.condition.sign, this.enclose(low, high));
@@ -78,7 +72,7 @@ class IntervalSearch {
       const point = this.refutedAt(sample);
       if (point !== undefined) return { outcome: 'broken', point };
     }
-    const budget = Math.min(MOST_BOXES, Math.ceil(MOST_WORK / this.cone.length));
+    const budget = Math.min(MOST_BOXES, Math.ceil(MOST_WORK / this.program.operations.length));
     const queue = [box];
     let open = false;
     for (let next = 0; next < queue.length; next++) {
@@ -129,19 +123,22 @@ class IntervalSearch {
 
   private enclose(low: readonly number[], high: readonly number[]): Interval {
     this.where.variables.forEach((index, i) => (this.parameters[index] = { low: low[i], high: high[i] }));
-    encloseNodes(this.program, this.cone, this.parameters, this.values);
-    return subjectInterval(this.condition.subject, this.values);
+    const values = evaluateInterval(this.program, this.parameters);
+    return subjectInterval(this.condition.subject, (node) => {
+      const value = values[this.placeOf.get(node) ?? 0];
+      return isDomainIssue(value) ? ANY : value;
+    });
   }
 }
 
-function subjectInterval(subject: Subject, values: readonly Interval[]): Interval {
+function subjectInterval(subject: Subject, valueOf: (node: NodeId) => Interval): Interval {
   switch (subject.kind) {
     case 'node':
-      return values[subject.node];
+      return valueOf(subject.node);
     case 'cosine':
-      return cos(values[subject.node]);
+      return cos(valueOf(subject.node));
     case 'determinant':
-      return intervalDeterminant(subject.rows.map((row) => row.map((node) => values[node])));
+      return intervalDeterminant(subject.rows.map((row) => row.map(valueOf)));
   }
 }
 

@@ -41,6 +41,7 @@ function withoutFrequency({ packing, exponent, terms }: ExactPolynomial): LoopPo
       coefficient,
     })),
     returned: [],
+    divisors: [],
   };
 }
 

@@ -1,5 +1,7 @@
 import { add, multiply, negate, type Interval } from '../../../expressions/interval';
-import { ANY } from './interval-values';
+
+/** What is known of a value that may not exist, or is too costly to enclose. */
+export const ANY: Interval = { low: -Infinity, high: Infinity };
 
 /** Largest matrix whose minors are enclosed: 2^size sets of columns. */
 const LARGEST_SIZE = 12;

@@ -5,11 +5,16 @@ import type { NodeSite } from '../expression-compiler';
 import type { NominalValues } from '../nominal-values';
 import type { RequiredSign, SignCondition, Subject } from './sign-condition';
 
-/** What must hold for an operation of a study's expression to be defined: divisors, roots, logarithms, powers, tan. */
+/**
+ * What must hold for an operation of a study's expression to be defined: divisors, roots, logarithms, powers, tan.
+ *
+ * @param mayBeNegative whether a node cannot be shown to be at least 0 everywhere in the bands
+ */
 export function operationConditions(
   program: Program,
   { node, path }: NodeSite,
   nominal: NominalValues,
+  mayBeNegative: (node: NodeId) => boolean,
 ): SignCondition[] {
   const { operations, left, right } = program;
   const operand: Subject = { kind: 'node', node: left[node] };
@@ -23,7 +28,7 @@ export function operationConditions(
     case 'tan':
       return [condition(path, { kind: 'cosine', node: left[node] }, 'nonzero', DOMAIN_REASONS.tangent)];
     case 'power':
-      return powerConditions(path, operand, right[node], nominal);
+      return powerConditions(path, operand, right[node], nominal, mayBeNegative);
     default:
       return [];
   }
@@ -34,11 +39,17 @@ function powerConditions(
   base: Subject,
   exponent: NodeId,
   nominal: NominalValues,
+  mayBeNegative: (node: NodeId) => boolean,
 ): SignCondition[] {
+  if (nominal.isVarying(exponent)) {
+    const conditions = [condition(path, base, 'nonnegative', DOMAIN_REASONS.power)];
+    if (mayBeNegative(exponent))
+      conditions.push(condition(path, base, 'nonzero', DOMAIN_REASONS.powerOfZero));
+    return conditions;
+  }
   const value = nominal.value(exponent);
-  const isWhole = !nominal.isVarying(exponent) && Number.isInteger(value);
   const conditions: SignCondition[] = [];
-  if (!isWhole) conditions.push(condition(path, base, 'nonnegative', DOMAIN_REASONS.power));
+  if (!Number.isInteger(value)) conditions.push(condition(path, base, 'nonnegative', DOMAIN_REASONS.power));
   if (value < 0) conditions.push(condition(path, base, 'nonzero', DOMAIN_REASONS.division));
   return conditions;
 }
