@@ -8,6 +8,9 @@ export class ExpansionLimitError extends Error {
 /** Most terms of one polynomial in the parameters, and of one product of two. */
 export const MAXIMUM_POLYNOMIAL_TERMS = 20_000;
 
+/** Longest coefficient, in bits: repeated squaring of constants would double it without end. */
+export const MAXIMUM_COEFFICIENT_BITS = 50_000;
+
 /**
  * How exponent vectors are packed into one number: `bits` binary digits per variable, variable 0 lowest.
  * Keys stay below 2^52, so adding two keys adds the exponents and is exact.
@@ -117,6 +120,13 @@ export class ExactPolynomial {
       for (const [otherKey, otherCoefficient] of other.terms) {
         const sum = key + otherKey;
         terms.set(sum, (terms.get(sum) ?? 0n) + coefficient * otherCoefficient);
+      }
+    }
+    for (const coefficient of terms.values()) {
+      if (BigInt.asIntN(MAXIMUM_COEFFICIENT_BITS, coefficient) !== coefficient) {
+        throw new ExpansionLimitError(
+          `an expression needs more than ${MAXIMUM_COEFFICIENT_BITS} binary digits to be exact; shorten its chain of products`,
+        );
       }
     }
     return ExactPolynomial.fromTerms(this.packing, this.exponent + other.exponent, terms);

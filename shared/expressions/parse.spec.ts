@@ -227,7 +227,7 @@ describe('what is not an expression', () => {
     const error = failure(nested(MAXIMUM_EXPRESSION_DEPTH));
     expect(error.message).toMatch(/nested deeper than 64/);
     expect(error.position).toBe(open.length * MAXIMUM_EXPRESSION_DEPTH);
-    expect(failure(nested(400)).message).toMatch(/nested deeper/);
+    expect(failure(nested(300)).message).toMatch(/nested deeper/);
   });
 
   it('arbitrary text gives a tree or an error with a position inside the text, nothing else', () => {

@@ -39,6 +39,7 @@ describe('the range of a gain', () => {
       parameters: [],
     });
     expect(nominal.gainMargin?.up).toBeCloseTo(14 / 9, 6);
+    // Derived: downwards only factor 0 puts a pole on the axis.
     expect(nominal.gainMargin?.down).toBeNull();
   });
 

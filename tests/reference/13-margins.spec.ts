@@ -24,6 +24,7 @@ describe('margins of 0.38(s² + 0.1s + 0.55)/(s(s + 1)(s² + 0.06s + 0.5))', () 
   });
 
   it('has no finite upper gain margin', () => {
+    // Printed. Downwards only factor 0 puts a pole on the axis (recomputed).
     expect(nominal.gainMargin).toEqual({ up: null, down: null });
   });
 

@@ -47,7 +47,9 @@ export function* analyseInSteps(study: ComposedStudy, options: AnalysisOptions):
     return yield* new Analysis(study, options).run();
   } catch (error) {
     if (!(error instanceof ExpansionLimitError)) throw error;
-    throw new StudyFaultError([{ path: 'machine', message: `is too large to expand: ${error.message}` }]);
+    throw new StudyFaultError([
+      { path: 'machine', message: `is too large to expand exactly: ${error.message}` },
+    ]);
   }
 }
 

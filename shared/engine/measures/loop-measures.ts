@@ -153,7 +153,8 @@ export class LoopMeasures {
       ...base,
       gainMargin: {
         up: Number.isNaN(upFrequency) ? null : up,
-        down: Number.isNaN(downFrequency) ? null : down,
+        // A factor of 0 is no loop at all: the gain may be lowered without limit.
+        down: Number.isNaN(downFrequency) || down === 0 ? null : down,
       },
       phaseMargin: this.phaseMargin().value,
       delayMargin: finiteOrNull(this.delayMargin().value),

@@ -1,5 +1,8 @@
 import { UNIT_ROUNDOFF } from './rounding';
 
+/** More than a modulus can lose where the squares under its root fall below the smallest double: 2^−537. */
+const UNDERFLOWN_SQUARE = 1e-161;
+
 /** Shape of one or two complex polynomials in m variables and t, in tensor Bernstein form. */
 export interface TensorShape {
   /** Degree in each variable. */
@@ -159,8 +162,8 @@ export class BernsteinKernel {
         const y = sine * box[size + i];
         const dx = box[second + i];
         const dy = box[second + size + i];
-        const disc =
-          beta * (Math.sqrt(dx * dx + dy * dy) + box[radii + columns + k]) * (1 + 8 * UNIT_ROUNDOFF);
+        const modulus = Math.sqrt(dx * dx + dy * dy) + UNDERFLOWN_SQUARE;
+        const disc = beta * (modulus + box[radii + columns + k]) * (1 + 8 * UNIT_ROUNDOFF);
         const slack = box[radii + k] + 4 * UNIT_ROUNDOFF * (Math.abs(x) + Math.abs(y) + disc);
         if (!(x + y - disc > slack * (1 + 1e-6))) return false;
       }
@@ -170,10 +173,17 @@ export class BernsteinKernel {
 
   /** Sets the unit direction that bisects the angle from the right to the left edge; false when they are opposed. */
   private bisect(leftX: number, leftY: number, rightX: number, rightY: number): boolean {
-    const left = Math.sqrt(leftX * leftX + leftY * leftY);
-    const right = Math.sqrt(rightX * rightX + rightY * rightY);
-    const x = leftX / left + rightX / right;
-    const y = leftY / left + rightY / right;
+    // Divided by their larger part first: the squares of small vectors would be 0.
+    const leftSize = Math.max(Math.abs(leftX), Math.abs(leftY));
+    const rightSize = Math.max(Math.abs(rightX), Math.abs(rightY));
+    const x1 = leftX / leftSize;
+    const y1 = leftY / leftSize;
+    const x2 = rightX / rightSize;
+    const y2 = rightY / rightSize;
+    const left = Math.sqrt(x1 * x1 + y1 * y1);
+    const right = Math.sqrt(x2 * x2 + y2 * y2);
+    const x = x1 / left + x2 / right;
+    const y = y1 / left + y2 / right;
     const length = Math.sqrt(x * x + y * y);
     if (!(length > 1e-14)) return false;
     this.cosine = x / length;

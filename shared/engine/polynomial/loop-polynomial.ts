@@ -1,11 +1,12 @@
+import type {
+  ExactPolynomial,
+  RationalFunction} from '../../expressions';
 import {
   type Denominator,
   type ExactEvaluator,
-  ExactPolynomial,
   ExpansionLimitError,
   exponentOf,
-  leastCommonMultiple,
-  RationalFunction,
+  leastCommonMultiple
 } from '../../expressions';
 import type { LoopMatrix } from '../loop/loop-matrix';
 
@@ -124,7 +125,7 @@ function packingRadices(rows: readonly (readonly ClearedEntry[])[], variables: n
   let range = 1;
   for (const radix of radices) range *= radix;
   if (range > 4e15)
-    throw new ExpansionLimitError('the closed loop has too many toleranced parameters of high degree');
+    throw new ExpansionLimitError('too many toleranced parameters of high degree; make some of them exact');
   return radices;
 }
 
@@ -138,7 +139,7 @@ function packRow(
   const byColumn = new Map<number, Map<number, bigint>>();
   for (const { column, power, broken, value } of row) {
     let terms = byColumn.get(column);
-    if (terms === undefined) byColumn.set(column, (terms = new Map()));
+    if (terms === undefined) byColumn.set(column, (terms = new Map<number, bigint>()));
     const shift = BigInt(value.exponent - exponent);
     for (const [key, coefficient] of value.terms) {
       let packed = 0;
@@ -175,12 +176,12 @@ function expandByMinors(rows: readonly PackedRow[], size: number): Map<number, b
         const union = mask | bit;
         if ((mask & bit) !== 0 || (union & needed) !== needed) continue;
         let target = next.get(union);
-        if (target === undefined) next.set(union, (target = new Map()));
+        if (target === undefined) next.set(union, (target = new Map<number, bigint>()));
         const negative = (bitCount(mask >>> column) & 1) === 1;
         products += minor.size * keys.length;
         if (products > MAXIMUM_TERM_PRODUCTS) {
           throw new ExpansionLimitError(
-            `the closed loop is too dense to expand: more than ${MAXIMUM_TERM_PRODUCTS} products of terms`,
+            `more than ${MAXIMUM_TERM_PRODUCTS} products of terms; leave out states or couplings that do not matter`,
           );
         }
         for (let i = 0; i < keys.length; i++) {
@@ -197,7 +198,7 @@ function expandByMinors(rows: readonly PackedRow[], size: number): Map<number, b
     }
     minors = next;
   });
-  return minors.get(size === 0 ? 0 : allColumns(size)) ?? new Map();
+  return minors.get(size === 0 ? 0 : allColumns(size)) ?? new Map<number, bigint>();
 }
 
 /** Each time the row that opens fewest new columns and closes most, so that few column sets are open at once. */

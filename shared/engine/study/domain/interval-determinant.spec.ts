@@ -28,7 +28,7 @@ describe('intervalDeterminant', () => {
         [0, 4, 1, 1],
         [3, 1, 1, 2],
       ],
-      47,
+      37,
     ],
     [
       [

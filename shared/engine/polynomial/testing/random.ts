@@ -1,0 +1,11 @@
+/** Seeded pseudo-random numbers in [0, 1): a 32-bit mixing generator after Marsaglia's Weyl sequences. */
+export function seededRandom(seed: number): () => number {
+  let state = seed >>> 0;
+  return () => {
+    state = (state + 0x9e3779b9) >>> 0;
+    let mixed = state;
+    mixed = Math.imul(mixed ^ (mixed >>> 16), 0x21f0aaad);
+    mixed = Math.imul(mixed ^ (mixed >>> 15), 0x735a2d97);
+    return ((mixed ^ (mixed >>> 15)) >>> 0) / 4294967296;
+  };
+}
