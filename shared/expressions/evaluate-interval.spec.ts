@@ -51,13 +51,16 @@ describe('interval evaluation', () => {
         const { program } = compile(text);
         const values = evaluateInterval(program, [x, y]);
         const evaluator = new ExactEvaluator(program, [0, 0], [0, 1]);
-        const point = [partWay(x.low, x.high, atX), partWay(y.low, y.high, atY)].map((value) => Fraction.of(value));
+        const point = [partWay(x.low, x.high, atX), partWay(y.low, y.high, atY)].map((value) =>
+          Fraction.of(value),
+        );
         values.forEach((value, id) => {
           if (isDomainIssue(value)) return;
           const node = evaluator.node(id);
           if (node === undefined) throw new Error(`${text} is not rational`);
           const exact = rationalAt(node, point);
-          if (value.low !== -Infinity) expect(exact.compare(Fraction.of(value.low))).toBeGreaterThanOrEqual(0);
+          if (value.low !== -Infinity)
+            expect(exact.compare(Fraction.of(value.low))).toBeGreaterThanOrEqual(0);
           if (value.high !== Infinity) expect(exact.compare(Fraction.of(value.high))).toBeLessThanOrEqual(0);
           enclosed++;
         });

@@ -32,7 +32,10 @@ const polynomial = fc
     terms.reduce(
       (sum, [value, i, j, k]) =>
         sum.add(
-          ExactPolynomial.constant(packing, value).multiply(power(x, i)).multiply(power(y, j)).multiply(power(z, k)),
+          ExactPolynomial.constant(packing, value)
+            .multiply(power(x, i))
+            .multiply(power(y, j))
+            .multiply(power(z, k)),
         ),
       zero,
     ),

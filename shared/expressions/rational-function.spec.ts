@@ -19,7 +19,11 @@ interface Built {
 function reciprocal(built: Built): Built | undefined {
   return built.value.numerator.isZero
     ? undefined
-    : { value: built.value.reciprocal(), at: (p) => new Fraction(1n).divide(built.at(p)), text: `1/(${built.text})` };
+    : {
+        value: built.value.reciprocal(),
+        at: (p) => new Fraction(1n).divide(built.at(p)),
+        text: `1/(${built.text})`,
+      };
 }
 
 const { built } = fc.letrec<{ built: Built }>((tie) => ({
@@ -53,7 +57,11 @@ const { built } = fc.letrec<{ built: Built }>((tie) => ({
     fc.tuple(tie('built'), fc.integer({ min: -3, max: 3 })).map(([a, n]) =>
       a.value.numerator.isZero && n < 0
         ? a
-        : { value: a.value.power(n), at: (p: readonly Fraction[]) => a.at(p).power(n), text: `(${a.text})^${n}` },
+        : {
+            value: a.value.power(n),
+            at: (p: readonly Fraction[]) => a.at(p).power(n),
+            text: `(${a.text})^${n}`,
+          },
     ),
   ),
 }));
@@ -80,7 +88,7 @@ describe('rational functions', () => {
         const value = valueOrPole(() => rationalAt(f.value, [a, b]));
         if (expected === undefined) return;
         // A divisor inside, such as that of 1/(1/x), may have been multiplied out but never been lost.
-        if (value === undefined) throw new Error(`${f.text} has a pole at ${a}, ${b}`);
+        if (value === undefined) throw new Error(`${f.text} has a pole at ${a.toString()}, ${b.toString()}`);
         expect(value.compare(expected), f.text).toBe(0);
         compared++;
       }),

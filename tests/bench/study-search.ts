@@ -24,13 +24,6 @@ export class StudySearch {
       const side = Math.max(high - nominal, nominal - low);
       return Math.max(Math.abs(nominal) + reach * side, i === this.space.payload ? this.searchedUpTo : 0);
     });
-    this.search = new AnswerSearch(
-      study,
-      this.space,
-      this.model,
-      study.requirements,
-      this.widest,
-      this.work,
-    );
+    this.search = new AnswerSearch(study, this.space, this.model, study.requirements, this.widest, this.work);
   }
 }

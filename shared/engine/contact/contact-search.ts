@@ -11,6 +11,9 @@ type TwoSided = AnyTwoSided<ProvableRequirement>;
 /** Most boxes of one requirement's search; beyond it the answer is undecided. */
 export const BOX_LIMIT = 20_000;
 
+/** Least relative gain for which a search that stayed open goes on with a smaller box. */
+const SMALLEST_GAIN = 0.02;
+
 export interface SearchContext {
   /** Problems, cheapest first. */
   readonly problems: readonly ProvableRequirement[];
@@ -43,25 +46,39 @@ export function* contactSearch(
     if (first !== undefined)
       contact = better(contact, { objective: family.objectiveOf(first), point: first, problem });
     const budget: BoxBudget = { boxes: 0, limit: context.boxLimit };
+    /** What is known to hold for this requirement after its box stayed open, and the next objective to try. */
+    let kept: { objective: number; share: number } | undefined;
+    let target = Infinity;
     for (;;) {
       const clip = contact === undefined ? family.reach : contact.objective - family.gapAt(contact.objective);
       const onSlice = clip < 0 || (clip === 0 && family.reach > 0);
       if (onSlice && sliceAtZero === undefined) break;
       const searched = onSlice && sliceAtZero !== undefined ? sliceAtZero : family;
-      const ranges = searched.rangesAt(Math.max(clip, 0));
+      const aim = Math.max(0, Math.min(clip, target));
       const before = budget.boxes;
-      const outcome = yield* proveBox(problem, searched, ranges, budget);
+      const outcome = yield* proveBox(problem, searched, searched.rangesAt(aim), budget);
       context.work.boxes += budget.boxes - before;
       if (outcome.kind === 'contact') {
         contact = improved(context, family, problem, outcome.point, contact);
-        if (contact.objective <= 0)
-          return { provedTo: undefined, contact, openShare: undefined, openMeasure: undefined };
+        if (contact.objective <= 0) return { provedTo: undefined, contact, openShare: undefined, openMeasure: undefined };
         continue;
       }
-      if (outcome.kind === 'open' && (open === undefined || outcome.objective < open.objective)) {
-        open = { objective: onSlice ? 0 : outcome.objective, share: outcome.share, measure: problem.measure };
+      if (outcome.kind === 'proved' && aim >= Math.max(0, clip)) {
+        kept = undefined;
+        break;
       }
-      break;
+      const reached = outcome.kind === 'proved' ? aim : onSlice ? 0 : outcome.objective;
+      const share = outcome.kind === 'open' ? outcome.share : (kept?.share ?? 0);
+      const gained = kept === undefined ? reached : reached - kept.objective;
+      if (kept === undefined || reached > kept.objective) kept = { objective: reached, share };
+      // A smaller box is expanded with smaller rounding errors and may prove more: go up from what holds.
+      if (onSlice || family.reach === 0 || gained <= SMALLEST_GAIN * reached) break;
+      target = Math.max(2 * reached, reached + 10 * family.gapAt(reached));
+      if (target >= clip) target = 0.5 * (reached + clip);
+      budget.limit = budget.boxes + Math.ceil(context.boxLimit / 4);
+    }
+    if (kept !== undefined && (open === undefined || kept.objective < open.objective)) {
+      open = { ...kept, measure: problem.measure };
     }
   }
   return conclude(family, contact, open, sliceAtZero !== undefined);

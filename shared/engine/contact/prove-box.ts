@@ -17,8 +17,8 @@ export interface BoxBudget {
   limit: number;
 }
 
-/** Narrowest fraction of the root box to which a variable is split, 2⁻⁴⁰, and t, 2⁻⁴⁸. */
-const NARROWEST_VARIABLE = 9.094947017729282e-13;
+/** Narrowest fraction of the root box to which a variable is split, 2⁻³⁰, and t, 2⁻⁴⁸. */
+const NARROWEST_VARIABLE = 9.313225746154785e-10;
 const NARROWEST_TIME = 3.552713678800501e-15;
 
 /** After this many boxes of one search the least value seen is followed downhill for the first time. */
@@ -45,7 +45,8 @@ class BoxSearch {
   private readonly heap = new BoxHeap();
   private readonly spare: Float64Array[] = [];
   private readonly dimensions: number;
-  private readonly allowed: Uint8Array;
+  /** 1 for every dimension that has a width, t last. */
+  private readonly splittable: Uint8Array;
   private readonly point: Float64Array;
   private readonly low: Float64Array;
   private readonly high: Float64Array;
@@ -64,7 +65,7 @@ class BoxSearch {
     private readonly budget: BoxBudget,
   ) {
     this.dimensions = ranges.length;
-    this.allowed = new Uint8Array(this.dimensions + 1);
+    this.splittable = Uint8Array.from([...ranges.map(({ low, high }) => (high > low ? 1 : 0)), 1]);
     this.point = new Float64Array(this.dimensions);
     this.leastPoint = new Float64Array(this.dimensions);
     this.low = new Float64Array(this.dimensions);
@@ -121,15 +122,16 @@ class BoxSearch {
       }
       box.fresh = false;
     }
-    for (let i = 0; i <= this.dimensions; i++) {
-      const narrowest = i === this.dimensions ? NARROWEST_TIME : NARROWEST_VARIABLE;
-      const wide = i === this.dimensions || this.ranges[i].high > this.ranges[i].low;
-      this.allowed[i] = wide && box.high[i] - box.low[i] > narrowest ? 1 : 0;
-    }
-    const dimension = kernel.isNoise(box.data) ? -1 : kernel.splitDimension(box.data, this.allowed);
-    if (dimension < 0) return this.settle(box);
+    const dimension = kernel.isNoise(box.data) ? -1 : kernel.splitDimension(box.data, this.splittable);
+    // Where the dimension that matters is as narrow as it gets, splitting another one only makes more open boxes.
+    if (dimension < 0 || this.isNarrow(box, dimension)) return this.settle(box);
     this.split(box, dimension);
     return undefined;
+  }
+
+  private isNarrow(box: OpenBox, dimension: number): boolean {
+    const narrowest = dimension === this.dimensions ? NARROWEST_TIME : NARROWEST_VARIABLE;
+    return box.high[dimension] - box.low[dimension] <= narrowest;
   }
 
   /**

@@ -16,6 +16,8 @@ const REFINEMENT_ROUNDS = 4;
 const PATTERN_STEPS = [0.5, 0.2, 0.05];
 /** A witness from bisection sits in rounding noise: the reported one lies this much further out, relatively. */
 const STEP_OUT = 1e-6;
+/** A value up to this is not told from 0: a pole on the boundary, to be judged exactly. */
+const NEAR_ZERO = 1e-9;
 
 /** Finds failing points with a cheap test, without proving anything, and moves them to smaller objectives. */
 export class WitnessSearch {
@@ -49,9 +51,19 @@ export class WitnessSearch {
         }
       }
       if (worstCorner !== undefined) return this.refine({ objective, coordinates: worstCorner });
+      // Where a limit is touched at the very end of the range only, nothing fails on the way there.
+      const touching = objective === this.family.reach ? this.touching(objective, corners) : undefined;
+      if (touching !== undefined) return { objective, coordinates: touching };
       if (limit === 0) break;
     }
     return undefined;
+  }
+
+  private touching(objective: number, corners: readonly Float64Array[]): Float64Array | undefined {
+    return corners.find(
+      (corner) =>
+        this.value(objective, corner) <= NEAR_ZERO && this.problem.failsCertainly(this.point) !== undefined,
+    );
   }
 
   /** Corners of the free coordinates and their middle; beyond MOST_CORNERS a fixed selection of them. */
@@ -140,7 +152,7 @@ export class WitnessSearch {
       if (outward > family.reach) continue;
       family.placePoint(outward, witness.coordinates, point);
       snap(point);
-      if (problem.value(point) < 0 && problem.failsCertainly(point) !== undefined) return point;
+      if (problem.value(point) <= NEAR_ZERO && problem.failsCertainly(point) !== undefined) return point;
     }
     return undefined;
   }

@@ -142,15 +142,27 @@ class LoopAssembly {
     if (!this.isZero(hardware.lag)) result = [this.filter([this.program.one, hardware.lag], result)];
     if (!this.isZero(hardware.delay)) {
       this.delays.push({ node: hardware.delay, padeOrder: hardware.padeOrder, law });
-      const coefficients = this.padeNodes(hardware);
-      const inner = this.filter(coefficients, result);
-      result = coefficients.map((node, power) => ({
-        ...inner,
-        power,
-        node: power % 2 === 1 ? this.program.negate(node) : node,
-      }));
+      result = this.delayed(result, this.padeNodes(hardware));
     }
     return result;
+  }
+
+  /**
+   * Q(−s)/Q(s) · signal, with Q's coefficients given, as ±signal + (Q(−s) ∓ Q(s)) ξ, Q(s) ξ = signal: ξ is read below
+   * its highest derivative only, so that the output of a delay can be differentiated once without a further state.
+   */
+  private delayed(signal: Signal, coefficients: readonly NodeId[]): Signal {
+    const inner = this.filter(coefficients, signal);
+    const parity = (coefficients.length - 1) % 2;
+    const rest = coefficients.map((node, power) => ({
+      ...inner,
+      power,
+      node: this.program.multiply(this.program.constant(power % 2 === 1 ? -2 : 2), node),
+    }));
+    return [
+      ...(parity === 1 ? this.negated(signal) : signal),
+      ...rest.filter(({ power }) => power % 2 !== parity),
+    ];
   }
 
   private padeNodes(hardware: ComposedHardware): NodeId[] {

@@ -14,7 +14,12 @@ const SHAPES: TensorShape[] = [
 ];
 
 /** Integer coefficients: every value at a dyadic point is exact in doubles. */
-function integerBox(kernel: BernsteinKernel, random: () => number, centre: number, spread: number): Float64Array {
+function integerBox(
+  kernel: BernsteinKernel,
+  random: () => number,
+  centre: number,
+  spread: number,
+): Float64Array {
   const box = new Float64Array(kernel.length);
   for (let i = 0; i < kernel.radiusOffset(0); i++) box[i] = Math.floor(centre + spread * (2 * random() - 1));
   return box;
@@ -73,7 +78,7 @@ describe('exclusion', () => {
     const kernel = new BernsteinKernel(shape);
     const random = seededRandom(11);
     let clearBoxes = 0;
-    for (let trial = 0; trial < 150; trial++) {
+    for (let trial = 0; trial < 80; trial++) {
       const box = integerBox(kernel, random, trial % 3 === 0 ? 0 : 40, 40);
       const point = dyadicPoint(kernel, random);
       let target = { re: 0, im: 0 };
@@ -119,7 +124,9 @@ describe('exclusion', () => {
         for (let i = 0; i < size; i++) {
           const reach = box[i] * Math.cos(direction) + box[size + i] * Math.sin(direction);
           const disc =
-            kernel.polynomials === 2 ? (shape.discRadius ?? 0) * Math.hypot(box[2 * size + i], box[3 * size + i]) : 0;
+            kernel.polynomials === 2
+              ? (shape.discRadius ?? 0) * Math.hypot(box[2 * size + i], box[3 * size + i])
+              : 0;
           least = Math.min(least, reach - disc);
         }
         return least;
@@ -196,7 +203,7 @@ describe('splitting', () => {
     const kernel = new BernsteinKernel(shape);
     const random = seededRandom(13);
     let worst = 0;
-    for (let trial = 0; trial < 12; trial++) {
+    for (let trial = 0; trial < 6; trial++) {
       const box = new Float64Array(kernel.length);
       for (let i = 0; i < kernel.radiusOffset(0); i++) {
         // Columns of very different size, as stiff loops have them.
@@ -207,7 +214,7 @@ describe('splitting', () => {
       let part = box;
       const corner = kernel.shape.degrees.map(() => new Fraction(0n)).concat(new Fraction(0n));
       const width = corner.map(() => ONE);
-      for (let step = 0; step < 14; step++) {
+      for (let step = 0; step < 10; step++) {
         const dimension = Math.floor(random() * corner.length);
         const right = new Float64Array(kernel.length);
         kernel.split(part, right, dimension);
@@ -246,7 +253,8 @@ describe('splitting', () => {
     const left = [at[0], at[1].multiply(half), at[2]];
     const shifted = [at[0], at[1].multiply(half).add(half), at[2]];
     const difference = (part: Float64Array, place: Fraction[]): boolean =>
-      bernsteinValueAt(kernel, part, at).value.subtract(bernsteinValueAt(kernel, original, place).value).isZero;
+      bernsteinValueAt(kernel, part, at).value.subtract(bernsteinValueAt(kernel, original, place).value)
+        .isZero;
     expect(difference(box, left)).toBe(true);
     expect(difference(right, shifted)).toBe(true);
   });

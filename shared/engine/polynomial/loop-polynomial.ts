@@ -1,12 +1,10 @@
-import type {
-  ExactPolynomial,
-  RationalFunction} from '../../expressions';
+import type { ExactPolynomial, RationalFunction } from '../../expressions';
 import {
   type Denominator,
   type ExactEvaluator,
   ExpansionLimitError,
   exponentOf,
-  leastCommonMultiple
+  leastCommonMultiple,
 } from '../../expressions';
 import type { LoopMatrix } from '../loop/loop-matrix';
 
@@ -18,8 +16,9 @@ export interface ExactTerm {
 }
 
 /**
- * det P(s, p) with the output of one law multiplied by κ: broken + κ · returned. The closed loop is
- * a = broken + returned, and 1 + L = a / broken. Both share the scale 2^exponent.
+ * det P(s, p) with the output of one law multiplied by κ: broken + κ · returned, up to its sign and the divisors that
+ * were cleared from the rows (free of s and κ). The closed loop is a = broken + returned, and 1 + L = a / broken. Both
+ * share the scale 2^exponent.
  */
 export interface LoopPolynomial {
   readonly variables: number;

@@ -1,7 +1,6 @@
-import type { Requirement } from '../../../shared/contracts';
 import { directPoint, noise, requirementsOf, slack } from './direct-requirements';
 import type { SeededRandom } from './seeded-random';
-import { nominalValues, type StudyModel } from './study-model';
+import { type ModelRequirement, nominalValues, type StudyModel } from './study-model';
 
 /** A box of parameter values that an answer claims to be free of failing points. */
 export interface ClaimedBox {
@@ -12,7 +11,7 @@ export interface ClaimedBox {
 
 export interface FoundFailure {
   readonly claim: string;
-  readonly requirement: Requirement;
+  readonly requirement: ModelRequirement;
   readonly values: number[];
   readonly slack: number;
   readonly noise: number;
@@ -34,7 +33,7 @@ interface Look {
 /** Looks for points of a claimed box where a requirement fails: random points, its faces, then descents from the worst. */
 export class BoxAttack {
   readonly failures: FoundFailure[] = [];
-  private readonly requirements: readonly Requirement[];
+  private readonly requirements: readonly ModelRequirement[];
   private readonly rate: number;
   private readonly units: number[];
 

@@ -76,13 +76,16 @@ export class DirectMargins {
   private placeGrid(): void {
     let least = Infinity;
     let most = 0;
+    for (const { re, im } of [this.closed, this.broken]) {
+      for (let i = 0; i < re.length; i++) most = Math.max(most, Math.hypot(re[i], im[i]));
+    }
     const all: number[] = [];
     for (const poles of [this.closed, this.broken]) {
       for (let i = 0; i < poles.re.length; i++) {
         const size = Math.hypot(poles.re[i], poles.im[i]);
-        if (size < 1e-9) continue;
+        // A multiple pole at 0 comes out as several small ones.
+        if (size < 1e-6 * most) continue;
         least = Math.min(least, size);
-        most = Math.max(most, size);
         if (poles.im[i] < 0) continue;
         const width = Math.max(Math.abs(poles.re[i]), 1e-9 * size);
         if (width > 0.5 * size) continue;
@@ -92,27 +95,48 @@ export class DirectMargins {
         }
       }
     }
-    if (most === 0) least = most = 1;
+    if (least === Infinity) least = most = 1;
     const from = Math.log(least * 1e-3);
     const to = Math.log(most * 1e3);
     for (let k = 0; k < GRID; k++) all.push(Math.exp(from + ((to - from) * k) / (GRID - 1)));
-    this.omegas = Float64Array.from(all).sort();
+    // At a pole of L on the axis itself there is no value.
+    this.omegas = Float64Array.from(all).filter((omega) => {
+      this.evaluate(omega);
+      return Number.isFinite(this.re) && Number.isFinite(this.im);
+    });
+    this.omegas.sort();
   }
 
-  private bisect(low: number, high: number, value: () => number): number {
-    this.evaluate(low);
-    const positive = value() > 0;
-    let a = low;
-    let b = high;
-    for (let i = 0; i < 60 && b - a > 1e-15 * b; i++) {
-      const middle = 0.5 * (a + b);
-      this.evaluate(middle);
-      if (value() > 0 === positive) a = middle;
-      else b = middle;
+  /** All zeros of a value of 1 + L over the grid, pairs between neighbouring points included; visits each. */
+  private crossings(
+    res: Float64Array,
+    ims: Float64Array,
+    value: (re: number, im: number) => number,
+    visit: (omega: number) => void,
+  ): void {
+    const { omegas } = this;
+    const at = (omega: number): number => {
+      this.evaluate(omega);
+      return value(this.re, this.im);
+    };
+    const between = (low: number, high: number): void => {
+      const omega = bisect(at, low, high);
+      this.evaluate(omega);
+      visit(omega);
+    };
+    const values = res.map((re, k) => value(re, ims[k]));
+    for (let k = 0; k + 1 < values.length; k++) {
+      if (values[k] > 0 !== values[k + 1] > 0) between(omegas[k], omegas[k + 1]);
+      if (k === 0) continue;
+      const sign = values[k] > 0 ? 1 : -1;
+      const isDip = sign * values[k] <= sign * values[k - 1] && sign * values[k] <= sign * values[k + 1];
+      const isAlone = values[k - 1] > 0 === values[k] > 0 && values[k + 1] > 0 === values[k] > 0;
+      if (!isDip || !isAlone) continue;
+      const dip = least((omega) => sign * at(omega), omegas[k - 1], omegas[k + 1]);
+      if (sign * at(dip) > 0) continue;
+      between(omegas[k - 1], dip);
+      between(dip, omegas[k + 1]);
     }
-    const omega = 0.5 * (a + b);
-    this.evaluate(omega);
-    return omega;
   }
 
   private gain(result: Margins, res: Float64Array, ims: Float64Array): void {
@@ -125,70 +149,86 @@ export class DirectMargins {
     offer(this.ratio - 1);
     this.evaluate(0);
     if (Number.isFinite(this.re)) offer(this.re - 1);
-    for (let k = 0; k + 1 < res.length; k++) {
-      if (ims[k] > 0 === ims[k + 1] > 0) continue;
-      this.bisect(this.omegas[k], this.omegas[k + 1], () => this.im);
-      // A change of sign through a pole of L on the axis is no crossing.
-      if (Math.abs(this.im) < 1e-3 * (1 + Math.abs(this.re))) offer(this.re - 1);
-    }
+    this.crossings(
+      res,
+      ims,
+      (_, im) => im,
+      () => {
+        // A change of sign through a pole of L on the axis is no crossing.
+        if (Math.abs(this.im) < 1e-3 * (1 + Math.abs(this.re))) offer(this.re - 1);
+      },
+    );
   }
 
   private phase(result: Margins, res: Float64Array, ims: Float64Array): void {
-    const excess = (re: number, im: number): number => (re - 1) * (re - 1) + im * im - 1;
-    for (let k = 0; k + 1 < res.length; k++) {
-      if (excess(res[k], ims[k]) > 0 === excess(res[k + 1], ims[k + 1]) > 0) continue;
-      const omega = this.bisect(this.omegas[k], this.omegas[k + 1], () => excess(this.re, this.im));
-      const turn = Math.atan2(-this.im, 1 - this.re);
-      result.phase = Math.min(result.phase, Math.abs(turn));
-      const lag = turn >= 0 ? turn : turn + 2 * Math.PI;
-      result.delay = Math.min(result.delay, lag / omega);
-    }
+    this.crossings(
+      res,
+      ims,
+      (re, im) => (re - 1) * (re - 1) + im * im - 1,
+      (omega) => {
+        const turn = Math.atan2(-this.im, 1 - this.re);
+        result.phase = Math.min(result.phase, Math.abs(turn));
+        const lag = turn >= 0 ? turn : turn + 2 * Math.PI;
+        result.delay = Math.min(result.delay, lag / omega);
+      },
+    );
   }
 
   private modulus(result: Margins, res: Float64Array, ims: Float64Array): void {
-    const size = (k: number): number => Math.hypot(res[k], ims[k]);
     this.evaluate(0);
     const still = Math.hypot(this.re, this.im);
-    result.modulus = Math.min(Math.abs(this.ratio), Number.isFinite(still) ? still : Infinity);
-    let least = Infinity;
-    for (let k = 0; k < res.length; k++) least = Math.min(least, size(k));
-    for (let k = 0; k < res.length; k++) {
-      const here = size(k);
-      result.modulus = Math.min(result.modulus, here);
-      const before = k > 0 ? size(k - 1) : Infinity;
-      const after = k + 1 < res.length ? size(k + 1) : Infinity;
-      if (here > before || here > after || here > 2 * least) continue;
-      result.modulus = Math.min(result.modulus, this.golden(Math.max(0, k - 1), Math.min(res.length - 1, k + 1)));
-    }
-  }
-
-  private golden(from: number, to: number): number {
+    const sizes = res.map((re, k) => Math.hypot(re, ims[k]));
+    const low = sizes.reduce((a, b) => Math.min(a, b), Infinity);
+    result.modulus = Math.min(Math.abs(this.ratio), low, Number.isFinite(still) ? still : Infinity);
     const at = (omega: number): number => {
       this.evaluate(omega);
       return Math.hypot(this.re, this.im);
     };
-    const section = 0.6180339887498949;
-    let a = this.omegas[from];
-    let b = this.omegas[to];
-    let x = b - section * (b - a);
-    let y = a + section * (b - a);
-    let fx = at(x);
-    let fy = at(y);
-    for (let i = 0; i < 40 && b - a > 1e-9 * b; i++) {
-      if (fx < fy) {
-        b = y;
-        y = x;
-        fy = fx;
-        x = b - section * (b - a);
-        fx = at(x);
-      } else {
-        a = x;
-        x = y;
-        fx = fy;
-        y = a + section * (b - a);
-        fy = at(y);
-      }
+    for (let k = 0; k < sizes.length; k++) {
+      const before = Math.max(0, k - 1);
+      const after = Math.min(sizes.length - 1, k + 1);
+      if (sizes[k] > sizes[before] || sizes[k] > sizes[after] || sizes[k] > 2 * low) continue;
+      result.modulus = Math.min(result.modulus, at(least(at, this.omegas[before], this.omegas[after])));
     }
-    return Math.min(fx, fy);
   }
+}
+
+/** A zero between two points of different sign. */
+function bisect(value: (x: number) => number, low: number, high: number): number {
+  const positive = value(low) > 0;
+  let a = low;
+  let b = high;
+  for (let i = 0; i < 60 && b - a > 1e-15 * b; i++) {
+    const middle = 0.5 * (a + b);
+    if (value(middle) > 0 === positive) a = middle;
+    else b = middle;
+  }
+  return 0.5 * (a + b);
+}
+
+/** Where a value with one minimum is least, by golden section (Kiefer 1953). */
+function least(value: (x: number) => number, low: number, high: number): number {
+  const section = 0.6180339887498949;
+  let a = low;
+  let b = high;
+  let x = b - section * (b - a);
+  let y = a + section * (b - a);
+  let fx = value(x);
+  let fy = value(y);
+  for (let i = 0; i < 40 && b - a > 1e-9 * b; i++) {
+    if (fx < fy) {
+      b = y;
+      y = x;
+      fy = fx;
+      x = b - section * (b - a);
+      fx = value(x);
+    } else {
+      a = x;
+      x = y;
+      fx = fy;
+      y = a + section * (b - a);
+      fy = value(y);
+    }
+  }
+  return fx < fy ? x : y;
 }

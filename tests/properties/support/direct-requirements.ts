@@ -1,8 +1,7 @@
-import type { Requirement } from '../../../shared/contracts';
 import { directLoop } from './direct-loop';
 import { DirectMargins, type Margins } from './direct-margins';
 import { directPoles, type Poles } from './direct-poles';
-import { siValues, type StudyModel } from './study-model';
+import { type ModelRequirement, siValues, type StudyModel } from './study-model';
 
 export interface DirectPoint {
   readonly closed: Poles;
@@ -45,7 +44,7 @@ export function directPoint(model: StudyModel, values: ArrayLike<number>): Direc
   return { closed, decayRate, dampingRatio, scale, scanner, margins };
 }
 
-export const lawOf = (model: StudyModel, requirement: Requirement): number =>
+export const lawOf = (model: StudyModel, requirement: ModelRequirement): number =>
   'input' in requirement && requirement.input !== undefined
     ? model.laws.findIndex(({ input }) => input === requirement.input)
     : 0;
@@ -56,7 +55,7 @@ export const lawOf = (model: StudyModel, requirement: Requirement): number =>
  */
 export function slack(
   model: StudyModel,
-  requirement: Requirement,
+  requirement: ModelRequirement,
   point: DirectPoint | undefined,
   rate: number,
 ): number {
@@ -83,13 +82,13 @@ export function slack(
 }
 
 /** The requirements of a study, stability among them whether it is listed or not. */
-export function requirementsOf(model: StudyModel): Requirement[] {
+export function requirementsOf(model: StudyModel): ModelRequirement[] {
   const others = model.requirements.filter(({ measure }) => measure !== 'stability');
   return [{ measure: 'stability' }, ...others];
 }
 
 /** What rounding may do to a slack at a point, generously: it is no failure if it is less than this. */
-export function noise(requirement: Requirement, point: DirectPoint | undefined, rate: number): number {
+export function noise(requirement: ModelRequirement, point: DirectPoint | undefined, rate: number): number {
   if (point === undefined) return 0;
   switch (requirement.measure) {
     case 'stability':

@@ -115,7 +115,7 @@ function placedGains(model: StudyModel, random: SeededRandom, frequency: number)
   if (!solveInPlace(transposed, last)) return undefined;
   let row = Float64Array.from(last, ([value]) => value);
   const left = (vector: Float64Array): Float64Array =>
-    vector.map((_, j) => vector.reduce((sum, entry, i) => sum + entry * open.matrix[i][j], 0));
+    Float64Array.from(vector, (_, j) => vector.reduce((sum, entry, i) => sum + entry * open.matrix[i][j], 0));
   for (let remaining = n; remaining > 0; ) {
     const size = frequency * random.decade(-0.3, 0.5);
     const next = left(row);

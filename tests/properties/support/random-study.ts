@@ -1,11 +1,10 @@
-import type { Requirement } from '../../../shared/contracts';
 import { directLoop } from './direct-loop';
 import { type DirectPoint, directPoint } from './direct-requirements';
 import { addHardware, type LawKind, randomLaw } from './random-control';
 import * as families from './random-machine';
 import { SeededRandom } from './seeded-random';
 import { StudyDraft } from './study-draft';
-import { nominalValues, siValues, type StudyModel } from './study-model';
+import { type ModelRequirement, nominalValues, siValues, type StudyModel } from './study-model';
 
 const FAMILIES: readonly families.MachineFamily[] = [
   families.chain,
@@ -87,22 +86,22 @@ function addSearches({ random, parameters, payload }: StudyDraft, model: StudyMo
   if (random.chance(0.3)) model.searchDownTo = Math.max(minimum ?? 0, Math.min(low, nominal * random.decade(-2, -0.1)));
 }
 
-function randomRequirements(random: SeededRandom, point: DirectPoint): Requirement[] {
+function randomRequirements(random: SeededRandom, point: DirectPoint): ModelRequirement[] {
   const share = random.chance(0.15) ? random.between(0.9, 0.999) : random.between(0.2, 0.9);
   const margins = point.margins(0);
   const of = {
-    stability: (): Requirement => ({ measure: 'stability' }),
-    decayRate: (): Requirement => ({ measure: 'decayRate', atLeast: share * Math.max(point.decayRate, 0) }),
-    dampingRatio: (): Requirement => ({
+    stability: (): ModelRequirement => ({ measure: 'stability' }),
+    decayRate: (): ModelRequirement => ({ measure: 'decayRate', atLeast: share * Math.max(point.decayRate, 0) }),
+    dampingRatio: (): ModelRequirement => ({
       measure: 'dampingRatio',
       atLeast: Math.min(0.95, share * Math.max(0, point.dampingRatio)),
     }),
-    gainMargin: (): Requirement => {
+    gainMargin: (): ModelRequirement => {
       const factor = margins ? Math.min(margins.gainUp, 1 / margins.gainDown, 6) : 2;
       return { measure: 'gainMargin', atLeast: 1 + share * (factor - 1) };
     },
-    phaseMargin: (): Requirement => ({ measure: 'phaseMargin', atLeast: share * Math.min(3, margins?.phase ?? 0.5) }),
-    modulusMargin: (): Requirement => ({
+    phaseMargin: (): ModelRequirement => ({ measure: 'phaseMargin', atLeast: share * Math.min(3, margins?.phase ?? 0.5) }),
+    modulusMargin: (): ModelRequirement => ({
       measure: 'modulusMargin',
       atLeast: share * Math.min(1, margins?.modulus ?? 0.5),
     }),

@@ -1,4 +1,4 @@
-import type { Requirement } from '../../../shared/contracts';
+import type { LevelMeasure } from '../../../shared/contracts';
 import type { Term } from './term';
 
 /** A parameter as the study writes it; SI value = value · siFactor. */
@@ -52,6 +52,11 @@ export interface HardwareModel {
   padeOrder?: number;
 }
 
+/** A requirement with its level as a number. */
+export type ModelRequirement =
+  | { measure: 'stability' }
+  | { measure: LevelMeasure; atLeast: number; input?: string };
+
 /** Everything that a study says, with entries in both forms. */
 export interface StudyModel {
   readonly name: string;
@@ -65,7 +70,7 @@ export interface StudyModel {
   actuators: (HardwareModel | undefined)[];
   sensor?: HardwareModel;
   sampling?: { period: Term; padeOrder?: number };
-  requirements: Requirement[];
+  requirements: ModelRequirement[];
 }
 
 export function siValues(model: StudyModel, values: ArrayLike<number>): Float64Array {

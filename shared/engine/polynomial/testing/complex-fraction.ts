@@ -1,4 +1,4 @@
-import { Fraction, ONE, ZERO } from '../../../expressions/testing/fraction';
+import { type Fraction, ONE, ZERO } from '../../../expressions/testing/fraction';
 
 /** Exact complex rational numbers, for checking against. */
 export class ComplexFraction {
@@ -44,6 +44,9 @@ export const COMPLEX_ZERO = new ComplexFraction(ZERO);
 export const IMAGINARY_UNIT = new ComplexFraction(ZERO, ONE);
 
 /** Σ coefficients[k] z^k by Horner's rule. */
-export function complexPolynomialAt(coefficients: readonly ComplexFraction[], z: ComplexFraction): ComplexFraction {
+export function complexPolynomialAt(
+  coefficients: readonly ComplexFraction[],
+  z: ComplexFraction,
+): ComplexFraction {
   return coefficients.reduceRight((sum, coefficient) => sum.multiply(z).add(coefficient), COMPLEX_ZERO);
 }

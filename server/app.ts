@@ -1,0 +1,74 @@
+import express, { type Express } from 'express';
+import { createAccess, checkRules } from './access';
+import { type Database, readSchemaState } from './db';
+import { createIdentify } from './features/auth';
+import { mailRoutes } from './features/mail';
+import type { HttpConfiguration } from './platform/configuration';
+import { healthRoutes } from './platform/health';
+import { answerProblems } from './platform/http/answer-problems';
+import { servePages } from './platform/http/pages';
+import { giveContext } from './platform/http/request-context';
+import { requireSameOrigin } from './platform/http/same-origin';
+import { securityHeaders } from './platform/http/security-headers';
+import { sessionCookie } from './platform/http/session-cookie';
+import type { Log } from './platform/log';
+import { mountRoutes, openApiRoute, type Route } from './platform/routing';
+import type { AccessRule } from './policies';
+
+export interface AppDependencies {
+  readonly http: Pick<HttpConfiguration, 'origin' | 'trustedProxies'>;
+  readonly database: Database;
+  readonly log: Log;
+  /** The program's version, as package.json states it. */
+  readonly version: string;
+  /** Folder of the built pages. */
+  readonly pages: string;
+  /** Aborted when the server stops. */
+  readonly stopping: AbortSignal;
+}
+
+export interface App {
+  readonly express: Express;
+  /** Every route of the API, for tests that walk all of them. */
+  readonly routes: readonly Route<AccessRule>[];
+}
+
+/** What keeps the server from working, in words. */
+async function findObstacles({ pool }: Database): Promise<string[]> {
+  try {
+    const state = await readSchemaState(pool);
+    return state === 'current' ? [] : ['the database has the schema of another version'];
+  } catch {
+    return ['the database cannot be reached'];
+  }
+}
+
+/** Builds the application: where features, policies and the platform meet. Opens no socket. */
+export function createApp(dependencies: AppDependencies): App {
+  const { http, database, log, version, pages, stopping } = dependencies;
+  const https = http.origin?.startsWith('https:') === true;
+  const cookie = sessionCookie({ https });
+  const { db } = database;
+
+  const features: Route<AccessRule>[] = [
+    ...healthRoutes({ version, findObstacles: () => findObstacles(database) }),
+    ...mailRoutes({ db }),
+  ];
+  const routes = [...features, openApiRoute(features, version)];
+  checkRules(routes);
+  const access = createAccess({ db, identify: createIdentify({ db, cookie }) });
+
+  const app = express();
+  app.disable('x-powered-by');
+  app.disable('etag');
+  app.set('trust proxy', [...http.trustedProxies]);
+  app.use(giveContext(log), securityHeaders({ https }), requireSameOrigin(http.origin));
+  app.use('/api', (_request, response, next) => {
+    response.set('Cache-Control', 'no-store');
+    next();
+  });
+  app.use('/api', mountRoutes({ routes, access, stopping }));
+  app.use(servePages(pages));
+  app.use(answerProblems);
+  return { express: app, routes };
+}

@@ -1,0 +1,1 @@
+export { createIdentify, type IdentifyDependencies } from './identify';

@@ -1,0 +1,130 @@
+import { readFileSync } from 'node:fs';
+import { createServer, type Server } from 'node:http';
+import { isIPv6, type AddressInfo } from 'node:net';
+import { join } from 'node:path';
+import { createApp } from './app';
+import { connectDatabase, requireCurrentSchema } from './db';
+import { startMailDelivery } from './features/mail';
+import type { Configuration } from './platform/configuration';
+import type { Log } from './platform/log';
+import { smtpTransport } from './platform/mail/smtp-transport';
+import { packageRoot } from './platform/package-root';
+
+/** How long requests under way may take when the server stops. */
+const PATIENCE_MS = 10_000;
+
+export interface ServeOptions {
+  readonly configuration: Configuration;
+  /** The application's role. */
+  readonly databaseUrl: string;
+  readonly log: Log;
+}
+
+export interface RunningServer {
+  /** Where people reach it. */
+  readonly address: string;
+  /** Stops accepting, lets requests under way finish, closes the database's connections. */
+  stop(): Promise<void>;
+}
+
+/** The port is taken, or cannot be had; the message is all that the person needs. */
+export class ListenError extends Error {
+  override readonly name = 'ListenError';
+}
+
+function listenFault(error: unknown, host: string, port: number): unknown {
+  if (!(error instanceof Error) || !('code' in error)) return error;
+  if (error.code === 'EADDRINUSE') {
+    const another = port < 65535 ? port + 1 : port - 1;
+    return new ListenError(
+      `port ${port} on ${host} is taken; stop what uses it, or choose another port: PORT=${another} npm start`,
+    );
+  }
+  if (error.code === 'EACCES') {
+    return new ListenError(`port ${port} needs more rights; choose one from 1024 on: PORT=4300 npm start`);
+  }
+  if (error.code === 'EADDRNOTAVAIL' || error.code === 'ENOTFOUND') {
+    return new ListenError(`this machine has no address ${host}; set HOST to one of its own`);
+  }
+  return error;
+}
+
+/** @throws ListenError where the address cannot be had */
+function listen(server: Server, host: string, port: number): Promise<AddressInfo> {
+  return new Promise((resolve, reject) => {
+    server.once('error', (error) => {
+      const fault = listenFault(error, host, port);
+      reject(fault instanceof Error ? fault : error);
+    });
+    server.listen(port, host, () => {
+      server.removeAllListeners('error');
+      const address = server.address();
+      if (address === null || typeof address === 'string') reject(new Error('the server has no port'));
+      else resolve(address);
+    });
+  });
+}
+
+function close(server: Server): Promise<void> {
+  return new Promise((resolve) => {
+    const hurry = setTimeout(() => server.closeAllConnections(), PATIENCE_MS);
+    server.close(() => {
+      clearTimeout(hurry);
+      resolve();
+    });
+    server.closeIdleConnections();
+  });
+}
+
+/**
+ * Tells at once whether an address can be had, before anything else is set going.
+ *
+ * @throws ListenError
+ */
+export async function requireFreeAddress({ host, port }: { host: string; port: number }): Promise<void> {
+  const probe = createServer();
+  await listen(probe, host, port);
+  await close(probe);
+}
+
+function programVersion(): string {
+  const content = JSON.parse(readFileSync(join(packageRoot, 'package.json'), 'utf8')) as { version: string };
+  return content.version;
+}
+
+/**
+ * Opens the server.
+ *
+ * @throws ListenError where the address cannot be had
+ * @throws SchemaMismatchError where the database is not up to date
+ */
+export async function serve({ configuration, databaseUrl, log }: ServeOptions): Promise<RunningServer> {
+  const { http, mail } = configuration;
+  const stopping = new AbortController();
+  const database = connectDatabase({ url: databaseUrl, log });
+  try {
+    await requireCurrentSchema(database.pool);
+    const app = createApp({
+      ...{ http, database, log },
+      version: programVersion(),
+      pages: join(packageRoot, 'dist', 'web'),
+      stopping: stopping.signal,
+    });
+    const server = createServer(app.express);
+    const { port } = await listen(server, http.host, http.port);
+    const delivery =
+      mail === undefined ? undefined : startMailDelivery({ db: database.db, transport: smtpTransport(mail), log });
+    return {
+      address: http.origin ?? `http://${isIPv6(http.host) ? `[${http.host}]` : http.host}:${port}`,
+      stop: async () => {
+        stopping.abort();
+        await close(server);
+        await delivery?.stop();
+        await database.close();
+      },
+    };
+  } catch (error) {
+    await database.close();
+    throw error;
+  }
+}

@@ -1,0 +1,14 @@
+import { createHash, randomBytes } from 'node:crypto';
+
+/** 256 bits: nothing that could be guessed, hence no salt and no slow hash are needed to store it. */
+const TOKEN_BYTES = 32;
+
+/** A secret to hand out: a session's cookie, the link of an invitation. Only its hash is stored. */
+export function newToken(): string {
+  return randomBytes(TOKEN_BYTES).toString('base64url');
+}
+
+/** SHA-256 of a token in hexadecimal, as it stands in the database. */
+export function hashToken(token: string): string {
+  return createHash('sha256').update(token).digest('hex');
+}

@@ -1,0 +1,147 @@
+/** One thing that is wrong with a request, and where: `body.name`, `query.limit`. */
+export interface RequestFault {
+  readonly path: string;
+  readonly message: string;
+}
+
+/** Members beside those of RFC 9457: `errors` of an invalid request, both versions of a conflict. */
+export type ProblemExtensions = Readonly<Record<string, unknown>>;
+
+/**
+ * A problem as RFC 9457 describes it. Thrown by use cases and policies, answered as
+ * `application/problem+json` by the error handler.
+ */
+export class Problem extends Error {
+  override readonly name = 'Problem';
+
+  constructor(
+    /** Stable name for programs, in kebab case; texts may change, codes may not. */
+    readonly code: string,
+    readonly status: number,
+    readonly title: string,
+    readonly detail?: string,
+    readonly extensions: ProblemExtensions = {},
+    readonly headers: Readonly<Record<string, string>> = {},
+  ) {
+    super(detail ?? title);
+  }
+}
+
+export interface ProblemDetails {
+  readonly type: string;
+  readonly code: string;
+  readonly title: string;
+  readonly status: number;
+  readonly detail?: string;
+  readonly requestId: string;
+  readonly [extension: string]: unknown;
+}
+
+/** The body of the answer to a request that met the problem. */
+export function problemDetails(problem: Problem, requestId: string): ProblemDetails {
+  return {
+    ...problem.extensions,
+    type: `/problems/${problem.code}`,
+    code: problem.code,
+    title: problem.title,
+    status: problem.status,
+    ...(problem.detail === undefined ? {} : { detail: problem.detail }),
+    requestId,
+  };
+}
+
+export type ProblemFactory = (detail?: string, extensions?: ProblemExtensions) => Problem;
+
+/**
+ * A kind of problem with its stable code. Features define theirs in X.errors.ts:
+ *
+ *     export const nameTaken = defineProblem({ code: 'product-name-taken', status: 409, title: '…' });
+ *     throw nameTaken('Another product is called "Lift table".');
+ */
+export function defineProblem(kind: { code: string; status: number; title: string }): ProblemFactory {
+  return (detail, extensions) => new Problem(kind.code, kind.status, kind.title, detail, extensions);
+}
+
+export function invalidRequest(errors: readonly RequestFault[]): Problem {
+  return new Problem('invalid-request', 400, 'The request has faults', undefined, { errors });
+}
+
+export const malformedJson = defineProblem({
+  code: 'malformed-json',
+  status: 400,
+  title: 'The body of the request is not JSON',
+});
+
+export const unauthenticated = defineProblem({
+  code: 'unauthenticated',
+  status: 401,
+  title: 'Sign in first',
+});
+
+export const forbidden = defineProblem({
+  code: 'forbidden',
+  status: 403,
+  title: 'Your role does not allow this',
+});
+
+export const originRefused = defineProblem({
+  code: 'origin-refused',
+  status: 403,
+  title: 'The request does not come from a page of this server',
+});
+
+/** Also the answer about a thing that exists but is not for the caller's eyes. */
+export const notFound = defineProblem({ code: 'not-found', status: 404, title: 'There is nothing here' });
+
+export function methodNotAllowed(allowed: readonly string[]): Problem {
+  const title = 'This cannot be done here';
+  return new Problem('method-not-allowed', 405, title, undefined, {}, { Allow: allowed.join(', ') });
+}
+
+export const conflict = defineProblem({
+  code: 'conflict',
+  status: 409,
+  title: 'It was changed in the meantime',
+});
+
+export const bodyTooLarge = defineProblem({
+  code: 'body-too-large',
+  status: 413,
+  title: 'The body of the request is too large',
+});
+
+export const unsupportedMediaType = defineProblem({
+  code: 'unsupported-media-type',
+  status: 415,
+  title: 'The body of the request must be application/json',
+});
+
+export const hostUnknown = defineProblem({
+  code: 'host-unknown',
+  status: 421,
+  title: 'This server does not answer under that name',
+});
+
+/** @param seconds after which a new attempt is worth making */
+export function tooManyRequests(seconds: number): Problem {
+  return new Problem(
+    'too-many-requests',
+    429,
+    'Too many attempts',
+    `Try again in ${seconds} s.`,
+    {},
+    { 'Retry-After': String(seconds) },
+  );
+}
+
+export const internalError = defineProblem({
+  code: 'internal-error',
+  status: 500,
+  title: 'Something went wrong on the server',
+});
+
+export const unavailable = defineProblem({
+  code: 'unavailable',
+  status: 503,
+  title: 'The server cannot do this at the moment',
+});

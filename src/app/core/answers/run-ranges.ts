@@ -1,0 +1,50 @@
+import type { RunSummary } from '../../../../shared/contracts/api';
+import type { PayloadRanges } from '../../ui/figures';
+import { failsAbove, failsBelow, provedFrom, provedTo, withUnit } from './figure';
+
+/** What the pictures show of a run; undefined while there is no answer. */
+export function rangesOfRun(run: RunSummary | null): PayloadRanges | undefined {
+  if (run === null || run.verdict === null) return undefined;
+  const { ratedLow, ratedHigh, provedLow, provedHigh, failsAt } = run;
+  const proved =
+    provedLow === null || provedHigh === null ? undefined : { low: provedLow, high: provedHigh };
+  const failsLow = failsAt !== null && proved !== undefined && failsAt < proved.low;
+  return {
+    rated: ratedLow === null || ratedHigh === null ? undefined : { low: ratedLow, high: ratedHigh },
+    proved,
+    failsBelow: failsLow ? failsAt : undefined,
+    failsAbove: failsAt === null || failsLow ? undefined : failsAt,
+    sampled: run.proof === 'sampled',
+  };
+}
+
+/**
+ * The smaller of the distances from both ends of the rated range to the ends of the proved one; negative where the
+ * rated range reaches beyond. The light end counts where something fails below it or it is not covered.
+ */
+export function reserveOf({ rated, proved, failsBelow: below }: PayloadRanges): number | undefined {
+  if (rated === undefined || proved === undefined) return undefined;
+  const heavy = proved.high - rated.high;
+  const light = rated.low - proved.low;
+  return below !== undefined || light < 0 ? Math.min(heavy, light) : heavy;
+}
+
+/** "0–571", rounded into the proved range. */
+export function provedText({ proved }: PayloadRanges): string {
+  return proved === undefined ? 'none' : `${provedFrom(proved.low)}\u2013${provedTo(proved.high)}`;
+}
+
+/** A payload picture in words. */
+export function rangesInWords(ranges: PayloadRanges, unit: string | null): string {
+  const { rated, proved, failsAbove: above, failsBelow: below, sampled } = ranges;
+  const word = sampled === true ? 'Sampled' : 'Proved';
+  const parts = [
+    proved === undefined
+      ? 'Nothing proved'
+      : `${word} ${provedFrom(proved.low)} to ${withUnit(provedTo(proved.high), unit)}`,
+    ...(rated === undefined ? [] : [`rated ${rated.low} to ${withUnit(String(rated.high), unit)}`]),
+    ...(below === undefined ? [] : [`fails at ${withUnit(failsBelow(below), unit)}`]),
+    ...(above === undefined ? [] : [`fails at ${withUnit(failsAbove(above), unit)}`]),
+  ];
+  return `${parts.join('; ')}.`;
+}

@@ -1,0 +1,1 @@
+export { RunEvents } from './run-events';

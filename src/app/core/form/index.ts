@@ -1,0 +1,2 @@
+export { validBy } from './schema-validator';
+export { submission, type Submission } from './submission';

@@ -1,0 +1,1 @@
+export { Page, pageHead, type PageHead, type Step } from './page';

@@ -1,0 +1,1 @@
+export { pageShortcuts, Shortcuts, type Shortcut } from './shortcuts';

@@ -1,0 +1,1 @@
+export { THEMES, ThemeChoice, type Theme } from './theme';

@@ -1,0 +1,2 @@
+export { momentText } from './moment';
+export { MomentView } from './moment-view';

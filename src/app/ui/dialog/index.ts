@@ -1,0 +1,2 @@
+export { confirm, type Question } from './confirm';
+export { DialogFrame } from './dialog-frame';
