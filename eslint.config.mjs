@@ -219,7 +219,7 @@ const portableArithmetic = {
 };
 
 export default tseslint.config(
-  { ignores: ['node_modules/', 'dist/', 'coverage/'] },
+  { ignores: ['node_modules/', 'dist/', 'coverage/', '.data/'] },
   {
     linterOptions: { noInlineConfig: true, reportUnusedDisableDirectives: 'error' },
     languageOptions: { ecmaVersion: 2023, sourceType: 'module' },

@@ -113,7 +113,9 @@ export async function serve({ configuration, databaseUrl, log }: ServeOptions): 
     const server = createServer(app.express);
     const { port } = await listen(server, http.host, http.port);
     const delivery =
-      mail === undefined ? undefined : startMailDelivery({ db: database.db, transport: smtpTransport(mail), log });
+      mail === undefined
+        ? undefined
+        : startMailDelivery({ db: database.db, transport: smtpTransport(mail), log });
     return {
       address: http.origin ?? `http://${isIPv6(http.host) ? `[${http.host}]` : http.host}:${port}`,
       stop: async () => {

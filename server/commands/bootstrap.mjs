@@ -17,10 +17,16 @@ const SETUP_FAILED = 3;
 
 const root = join(import.meta.dirname, '..', '..');
 
-/** Commands that run as a bundle in this process: name of the bundle → its entry point. */
+/**
+ * Commands that run as a bundle in this process: their entry points, and where their packages are.
+ *
+ * @type {ReadonlyMap<string, { entry: string, packages: 'inside' | 'outside' }>}
+ */
 const bundles = new Map([
-  ['study', 'server/commands/study.ts'],
-  ['bench', 'tests/bench/bench.ts'],
+  ['study', { entry: 'server/commands/study.ts', packages: 'inside' }],
+  ['bench', { entry: 'tests/bench/bench.ts', packages: 'inside' }],
+  ['start', { entry: 'server/commands/start.ts', packages: 'outside' }],
+  ['database', { entry: 'server/commands/database.ts', packages: 'outside' }],
 ]);
 
 /** Commands that check the project. */
@@ -28,13 +34,14 @@ const checks = ['test', 'types', 'lint'];
 
 /**
  * @param {string} name
- * @param {string} entry
  * @param {string} lockDigest
  * @param {string[]} rest
  */
-async function runBundle(name, entry, lockDigest, rest) {
+async function runBundle(name, lockDigest, rest) {
+  const bundle = bundles.get(name);
+  if (bundle === undefined) throw new SetupFailure(`no bundle ${name}`);
   const { freshBundle } = await import('./bootstrap/bundle.mjs');
-  const file = await freshBundle(root, name, entry, lockDigest);
+  const file = await freshBundle(root, name, bundle.entry, lockDigest, bundle.packages);
   process.argv = [process.execPath, file, ...rest];
   await import(pathToFileURL(file).href);
 }
@@ -55,13 +62,20 @@ async function main([name = '', ...rest]) {
   const { engines } = JSON.parse(readFileSync(join(root, 'package.json'), 'utf8'));
   requireNodeVersion(process.versions.node, engines.node);
 
-  const entry = bundles.get(name);
-  if (entry === undefined && !checks.includes(name)) {
-    throw new SetupFailure(`unknown command "${name}"; known: ${[...bundles.keys(), ...checks].join(', ')}`);
+  const known = [...bundles.keys(), ...checks];
+  if (!known.includes(name)) {
+    throw new SetupFailure(`unknown command "${name}"; known: ${known.join(', ')}`);
   }
   const lockDigest = await installPackages(root);
-  if (entry !== undefined) await runBundle(name, entry, lockDigest, rest);
-  else process.exitCode = await runCheck(name, rest);
+  if (checks.includes(name)) {
+    process.exitCode = await runCheck(name, rest);
+    return;
+  }
+  if (name === 'start') {
+    const { freshPages } = await import('./bootstrap/pages.mjs');
+    await freshPages(root, lockDigest);
+  }
+  await runBundle(name, lockDigest, rest);
 }
 
 try {

@@ -34,7 +34,9 @@ function wokenOrAborted(woken: Promise<void>, signal: AbortSignal): Promise<void
 /** @param listener on the channel `run_events` */
 export function createEventFeed(db: Db, listener: Listener): EventFeed {
   const latest = async () => {
-    const [row] = await db.select({ id: sql<number>`coalesce(max(${runEvents.id}), 0)::int8` }).from(runEvents);
+    const [row] = await db
+      .select({ id: sql<number>`coalesce(max(${runEvents.id}), 0)::int8` })
+      .from(runEvents);
     return Number(row.id);
   };
   return {

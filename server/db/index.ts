@@ -5,5 +5,6 @@ export { createEventFeed, type EventFeed } from './event-feed';
 export { listen, type Listener } from './listener';
 export { migrate } from './migrate';
 export { findProduct, type FoundProduct, type ProductKey } from './product-of';
+export { seedIfEmpty, type Seed } from './seed';
 export { readSchemaState, requireCurrentSchema, SchemaMismatchError } from './schema-version';
 export { inTransaction } from './transaction';

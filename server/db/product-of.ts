@@ -45,7 +45,10 @@ export async function findProduct(
   key: ProductKey,
   id: string,
 ): Promise<FoundProduct | undefined> {
-  const { rows } = await db.execute<{ product_id: string; role: NonNullable<FoundProduct['role']> | null }>(sql`
+  const { rows } = await db.execute<{
+    product_id: string;
+    role: NonNullable<FoundProduct['role']> | null;
+  }>(sql`
     select found.product_id, memberships.role
     from (${PRODUCT_QUERIES[key](id)}) as found
     left join memberships on memberships.product_id = found.product_id and memberships.person_id = ${personId}`);

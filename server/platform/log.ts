@@ -8,20 +8,25 @@ const SECRETS = ['password', 'passwordHash', 'newPassword', 'token', 'tokenHash'
 
 const redacted = SECRETS.flatMap((name) => [name, `*.${name}`, `*.*.${name}`]);
 
+/** Where logs of commands go, whose standard output is for people or for results. */
+export const standardError: DestinationStream = pino.destination({ fd: 2, sync: true });
+
 /**
  * Structured log, one JSON object a line. Errors of the database carry the values that were sent with a
  * statement; those are left out, message and code stay.
  *
- * @param destination standard output where left out
  */
-export function createLog(level: LogLevel, destination?: DestinationStream): Log {
+export function createLog(level: LogLevel, destination: DestinationStream): Log {
   return pino(
     {
       level,
       base: null,
       timestamp: pino.stdTimeFunctions.isoTime,
       formatters: { level: (label) => ({ level: label }) },
-      redact: { paths: [...redacted, 'headers["set-cookie"]', '*.headers["set-cookie"]'], censor: '[secret]' },
+      redact: {
+        paths: [...redacted, 'headers["set-cookie"]', '*.headers["set-cookie"]'],
+        censor: '[secret]',
+      },
       serializers: { error: describeError, err: describeError },
     },
     destination,

@@ -1,61 +1,26 @@
-import { mkdirSync, readFileSync, renameSync, statSync, writeFileSync } from 'node:fs';
+import { mkdirSync } from 'node:fs';
 import { join } from 'node:path';
-import process from 'node:process';
 import { withFolderLock } from './folder-lock.mjs';
+import { isUnchanged, originOf, readOrigin, replaceFile } from './origin.mjs';
 import { SetupFailure } from './setup-failure.mjs';
-
-/**
- * What a bundle was made from: the packages, and of each source its size and time of change. Equality with
- * what is found decides, not "newer than": a file brought back from an older revision is a change too.
- *
- * @typedef {{ lockDigest: string, sources: Record<string, string> }} Origin
- */
 
 /** What the bundle depends on beside the sources that the bundler reports. */
 const RECIPE = 'server/commands/bootstrap/bundle.mjs';
 
 /**
- * @param {string} root
- * @param {string} source
+ * Where the packages of a bundle are: `inside` starts in a third of the time, `outside` is for the server, whose
+ * packages bring files and workers of their own.
+ *
+ * @typedef {'inside' | 'outside'} Packages
  */
-function stateOf(root, source) {
-  const stat = statSync(join(root, source), { throwIfNoEntry: false });
-  return stat === undefined ? 'missing' : `${stat.size} ${stat.mtimeMs}`;
-}
-
-/**
- * @param {string} root
- * @param {string} originFile
- * @param {string} lockDigest
- */
-function isFresh(root, originFile, lockDigest) {
-  /** @type {Origin} */
-  let origin;
-  try {
-    origin = JSON.parse(readFileSync(originFile, 'utf8'));
-  } catch {
-    return false;
-  }
-  if (origin.lockDigest !== lockDigest) return false;
-  return Object.entries(origin.sources).every(([source, state]) => state === stateOf(root, source));
-}
-
-/**
- * @param {string} file
- * @param {string | Uint8Array} content
- */
-function replaceFile(file, content) {
-  const prepared = `${file}.${process.pid}`;
-  writeFileSync(prepared, content);
-  renameSync(prepared, file);
-}
 
 /**
  * @param {string} root
  * @param {string} entry
+ * @param {Packages} packages
  * @returns {Promise<{ code: Uint8Array, sources: string[] }>}
  */
-async function build(root, entry) {
+async function build(root, entry, packages) {
   const { build: esbuild, formatMessages } = await import('esbuild');
   try {
     const { outputFiles, metafile } = await esbuild({
@@ -67,6 +32,7 @@ async function build(root, entry) {
       platform: 'node',
       format: 'esm',
       target: 'node20',
+      packages: packages === 'inside' ? 'bundle' : 'external',
       // The module form of a package can be stripped of what is not used; its CommonJS form cannot.
       mainFields: ['module', 'main'],
       minifySyntax: true,
@@ -85,35 +51,28 @@ async function build(root, entry) {
 }
 
 /**
- * Builds the bundle of a command, its packages included, unless the one at hand is made from the same sources
- * and packages.
+ * Builds the bundle of a command unless the one at hand is made from the same sources and packages.
  *
  * @param {string} root
  * @param {string} name
  * @param {string} entry the command's entry point, from the root
  * @param {string} lockDigest digest of package-lock.json
+ * @param {Packages} [packages]
  * @returns {Promise<string>} path of the bundle
  */
-export async function freshBundle(root, name, entry, lockDigest) {
+export async function freshBundle(root, name, entry, lockDigest, packages = 'inside') {
   const folder = join(root, 'dist', 'commands');
   const file = join(folder, `${name}.mjs`);
   const originFile = join(folder, `${name}.json`);
-  if (isFresh(root, originFile, lockDigest)) return file;
+  const isFresh = () => isUnchanged(root, readOrigin(originFile), lockDigest);
+  if (isFresh()) return file;
   await withFolderLock(join(root, 'dist', 'locks', name), `building ${entry}`, async () => {
-    if (isFresh(root, originFile, lockDigest)) return;
+    if (isFresh()) return;
     const started = Date.now();
-    const { code, sources } = await build(root, entry);
-    /** @type {Origin} */
-    const origin = { lockDigest, sources: {} };
-    for (const source of [RECIPE, ...sources]) {
-      // What was changed while it was being read must be read again.
-      const changed =
-        (statSync(join(root, source), { throwIfNoEntry: false })?.mtimeMs ?? Infinity) >= started;
-      origin.sources[source] = changed ? 'changed while building' : stateOf(root, source);
-    }
+    const { code, sources } = await build(root, entry, packages);
     mkdirSync(folder, { recursive: true });
     replaceFile(file, code);
-    replaceFile(originFile, JSON.stringify(origin));
+    replaceFile(originFile, JSON.stringify(originOf(root, [RECIPE, ...sources], lockDigest, started)));
   });
   return file;
 }

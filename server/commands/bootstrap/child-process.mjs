@@ -18,15 +18,30 @@ function leaveIfStopped() {
   if (stopStatus !== 0 && running.size === 0) process.exit(stopStatus);
 }
 
-for (const [signal, status] of /** @type {const} */ ([
+/** Signals are taken over only while tasks run: before and after them they belong to the command. */
+const handlers = /** @type {const} */ ([
   ['SIGINT', 130],
   ['SIGTERM', 143],
-])) {
-  process.on(signal, () => {
+]).map(([signal, status]) => ({
+  signal,
+  handle: () => {
     stopStatus = status;
     for (const child of running) child.kill(signal);
     leaveIfStopped();
-  });
+  },
+}));
+
+/** @param {import('node:child_process').ChildProcess} child */
+function add(child) {
+  if (running.size === 0) for (const { signal, handle } of handlers) process.on(signal, handle);
+  running.add(child);
+}
+
+/** @param {import('node:child_process').ChildProcess} child */
+function remove(child) {
+  running.delete(child);
+  if (running.size === 0) for (const { signal, handle } of handlers) process.off(signal, handle);
+  leaveIfStopped();
 }
 
 /**
@@ -39,15 +54,14 @@ for (const [signal, status] of /** @type {const} */ ([
 function run(root, task, stdio, onOutput) {
   return new Promise((resolve, reject) => {
     const child = spawn(process.execPath, [task.script, ...task.args], { cwd: root, stdio });
-    running.add(child);
+    add(child);
     if (onOutput !== undefined) {
       child.stdout?.on('data', onOutput);
       child.stderr?.on('data', onOutput);
     }
     child.on('error', reject);
     child.on('close', (status) => {
-      running.delete(child);
-      leaveIfStopped();
+      remove(child);
       resolve(status ?? 1);
     });
   });
@@ -62,6 +76,17 @@ function run(root, task, stdio, onOutput) {
  */
 export function runShown(root, task) {
   return run(root, task, ['ignore', 'inherit', 'inherit']);
+}
+
+/**
+ * The same on standard error, where standard output belongs to the command that follows.
+ *
+ * @param {string} root
+ * @param {Task} task
+ * @returns {Promise<number>} exit status
+ */
+export function runAside(root, task) {
+  return run(root, task, ['ignore', 2, 2]);
 }
 
 /**

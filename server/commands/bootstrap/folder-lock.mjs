@@ -31,10 +31,12 @@ function tryAcquire(lock) {
   }
 }
 
-/** @param {number} pid */
-function isAlive(pid) {
-  // A lock that carries this process's own id while it is still waiting was left by an earlier holder of it.
-  if (pid === process.pid) return false;
+/**
+ * Whether a process of that id lives, whoever owns it.
+ *
+ * @param {number} pid
+ */
+export function isAlive(pid) {
   try {
     process.kill(pid, 0);
     return true;
@@ -59,7 +61,8 @@ function livingOwner(lock) {
     if (codeOf(error) !== 'ENOENT') throw error;
   }
   for (const owner of owners) {
-    if (isAlive(Number(owner))) return Number(owner);
+    // A lock that carries this process's own id while it is still waiting was left by an earlier holder of it.
+    if (Number(owner) !== process.pid && isAlive(Number(owner))) return Number(owner);
     rmSync(join(lock, owner), { force: true });
   }
   return undefined;

@@ -45,7 +45,12 @@ function applyOptions(response: Response, { headers = {}, cookies = [] }: ReplyO
   for (const cookie of cookies) response.append('Set-Cookie', cookie);
 }
 
-function sendJson(response: Response, status: number, schema: z.ZodType | undefined, returned: unknown): void {
+function sendJson(
+  response: Response,
+  status: number,
+  schema: z.ZodType | undefined,
+  returned: unknown,
+): void {
   response.status(status);
   if (returned instanceof JsonText) {
     applyOptions(response, returned.options);

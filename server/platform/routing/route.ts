@@ -44,7 +44,11 @@ interface RouteCommon<Rule, Params, Query> {
   readonly limits?: readonly RateLimit[];
 }
 
-export interface RouteDefinition<Rule, Params, Query, Body, Response> extends RouteCommon<Rule, Params, Query> {
+export interface RouteDefinition<Rule, Params, Query, Body, Response> extends RouteCommon<
+  Rule,
+  Params,
+  Query
+> {
   readonly method: Method;
   readonly body?: Body;
   /** 200 where left out, or 204 where there is no response. */

@@ -52,8 +52,6 @@ export class RequirementProblem implements ProvableRequirement {
     const exact = evaluateExactly(this.polynomial, point);
     const leading = leadingCoefficient(exact);
     if (leading === 0n) return { throughInfinity: true };
-    // A pole at 0 exactly: no count is possible with a pole on the boundary, and none is needed.
-    if (exact.broken[0] + exact.returned[0] === 0n) return { throughInfinity: false };
     // A pole exactly at the origin: no count is needed, and none could tell it from one beside it.
     if (exact.broken[0] + exact.returned[0] === 0n) return { throughInfinity: false };
     const outside = this.countPoles(exact);

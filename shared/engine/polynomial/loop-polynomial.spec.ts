@@ -114,8 +114,8 @@ describe('expansion of a loop', () => {
       }
     }
     expect(compared).toBeGreaterThan(100);
-    // p0, p0 + 3 and p0 p1; the divisor 7 is none that could vanish.
-    expect(told.size).toBe(3);
+    // p0, p0 + 3, (p0 + 3)² and p0 p1; the divisor 7 is none that could vanish.
+    expect(told.size).toBe(4);
   });
 
   it('finds the true degrees where terms cancel', () => {

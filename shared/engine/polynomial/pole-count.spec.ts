@@ -113,6 +113,23 @@ describe('number of poles outside', () => {
     expect(count([product * (1 + 2 ** -40), 2.5, 1.5, 1])).toBe(2);
   });
 
+  it('is never wrong where the exact coefficients have more digits than a double', () => {
+    const form = boundaryForm('stability', 0, 3);
+    const big = (): bigint => BigInt(Math.floor((1 + random()) * 2 ** 52)) * 4n + 1n;
+    for (let trial = 0; trial < 200; trial++) {
+      // s³ + a s² + b s + a b + shift: on the axis for shift 0, two outside for 1, none for −1.
+      const [a, b] = [big(), big()];
+      for (const [shift, outside] of [
+        [0n, undefined],
+        [1n, 2],
+        [-1n, 0],
+      ] as const) {
+        const found = countOutside(form.sheetsAt([a * b + shift, b, a, 1n], [0n, 0n, 0n, 0n])[0]);
+        expect([undefined, outside]).toContain(found);
+      }
+    }
+  });
+
   it.each([
     ['a pair on the axis', [1, 0, 1]],
     [
