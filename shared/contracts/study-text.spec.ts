@@ -15,6 +15,14 @@ describe('readStudy', () => {
     expect(warnings).toEqual([]);
   });
 
+  it('reads a machine without control, inputs and outputs', () => {
+    const machine = { states: ['x'], dynamics: [[-1]] };
+    const free = { ...liftTable(), machine, control: undefined, actuator: undefined };
+    const { study } = readStudy(JSON.stringify(free));
+    expect(study.control).toBeUndefined();
+    expect(study.machine).toEqual(machine);
+  });
+
   it('reads a file that starts with a byte order mark', () => {
     expect(readStudy(`\uFEFF${JSON.stringify(liftTable())}`).study.payload).toBe('m');
   });

@@ -174,7 +174,6 @@ describe('an unusable study', () => {
     ],
     ['an unknown law in a list', ['control'], [{ law: 'pdi' }], 'control[0].law', /"pdi" is not known/],
     ['no law', ['control'], [], 'control', /must list at least one law/],
-    ['control left out', ['control'], undefined, 'control', /is missing; give a law or a list of laws/],
     ['control that is a text', ['control'], 'pid', 'control', /must be a law or a list of laws/],
     [
       'a gain left out',

@@ -1,6 +1,6 @@
 export * from './dyadic';
 export * from './elementary';
-export { powerOfTwo, scaleByPowerOfTwo } from './elementary/float-bits';
+export { binaryExponent, powerOfTwo, scaleByPowerOfTwo } from './elementary/float-bits';
 export * from './evaluate';
 export * from './evaluate-interval';
 export * from './evaluate-exact';

@@ -41,7 +41,7 @@ const numbers = (matrix: readonly (readonly Scalar[])[], values: Values) =>
   matrix.map((row) => row.map((entry) => valueOf(parseExpression(String(entry)), values)));
 
 function entriesOf(machine: CustomMachine): Scalar[] {
-  const columns = [...Object.values(machine.inputs), ...Object.values(machine.disturbances ?? {})];
+  const columns = [...Object.values(machine.inputs ?? {}), ...Object.values(machine.disturbances ?? {})];
   if (isSecondOrder(machine)) {
     const outputs = Object.values(machine.outputs ?? {}).flatMap(({ position = [], velocity = [] }) => [
       position,
@@ -93,7 +93,7 @@ describe('templates', () => {
       const { machine, parameters: own } = templateOf(id);
       expect(own.map((parameter) => parameter.id).join(' ')).toBe(parameters);
       expect((isSecondOrder(machine) ? machine.coordinates : machine.states).join(' ')).toBe(coordinates);
-      expect(Object.keys(machine.inputs).join(' ')).toBe(inputs);
+      expect(Object.keys(machine.inputs ?? {}).join(' ')).toBe(inputs);
       expect(Object.keys(machine.disturbances ?? {}).join(' ')).toBe(disturbances);
       expect(Object.keys(machine.outputs ?? {}).join(' ')).toBe(outputs);
     },
@@ -111,7 +111,7 @@ describe('templates', () => {
       const outputs: (readonly Scalar[] | undefined)[] = isSecondOrder(machine)
         ? Object.values(machine.outputs ?? {}).flatMap(({ position, velocity }) => [position, velocity])
         : Object.values(machine.outputs ?? {});
-      const columns = [...Object.values(machine.inputs), ...Object.values(machine.disturbances ?? {})];
+      const columns = [...Object.values(machine.inputs ?? {}), ...Object.values(machine.disturbances ?? {})];
       const rows = [...columns, ...outputs].filter((row) => row !== undefined);
       expect(rows.length).toBeGreaterThanOrEqual(3);
       for (const row of rows) expect(row).toHaveLength(size);
@@ -173,7 +173,7 @@ describe('the equations', () => {
     // Twice the potential energy m g h cos(theta), to second order.
     expect(quadratic(numbers(stiffness, values))).toBeCloseTo(-m * 9.80665 * h * theta * theta, 9);
     // The torque works on the turn of the wheel against the body.
-    const [[onX, onTilt]] = numbers([inputs.u], values);
+    const [[onX, onTilt]] = numbers([inputs?.u ?? []], values);
     expect(onX * x + onTilt * theta).toBeCloseTo(x / R - theta, 12);
   });
 
@@ -239,7 +239,7 @@ describe('the equations', () => {
       });
     close(numbers(descriptor, values), shifted(inertia));
     close(numbers(dynamics, values), shifted(balance));
-    close(numbers([inputs.delta], values), [[cf, cf * lf + cf * e]]);
+    close(numbers([inputs?.delta ?? []], values), [[cf, cf * lf + cf * e]]);
     close(numbers([disturbances?.sidewind ?? []], values), [[1, 0]]);
   });
 });

@@ -1,8 +1,9 @@
 import { createHash } from 'node:crypto';
-import { dirname } from 'node:path';
+import { readFileSync } from 'node:fs';
+import { dirname, join } from 'node:path';
 import { describe, expect, it } from 'vitest';
 import { canonicalText, readStudy, type Result, resultSchema, type Study } from '../../shared/contracts';
-import { examplePath, exampleStudy, exampleText } from './support/example-studies';
+import { exampleNames, examplePath, exampleStudy, exampleText, ROOT } from './support/example-studies';
 import { type Outcome, runCommand } from './support/run-command';
 import { analyseText } from './support/run-in-process';
 
@@ -20,6 +21,15 @@ function resultOf({ status, output, messages }: Outcome): Result {
 function answers(result: Result) {
   const { work, ...rest } = result;
   return { ...rest, boxes: work.boxes };
+}
+
+/** A JSON value with its numbers to five digits. */
+function rounded(value: unknown): unknown {
+  return JSON.parse(
+    JSON.stringify(value, (_, entry: unknown) =>
+      typeof entry === 'number' ? Number(entry.toPrecision(5)) : entry,
+    ),
+  );
 }
 
 const fromFile = runCommand([examplePath(LIFT_TABLE)]);
@@ -77,6 +87,23 @@ describe('the study command', () => {
     expect(outcome.messages).toMatch(/^warning: parameters\[4\]\.unit: unknown unit "stone", .+\n$/);
     const { warnings } = resultSchema.parse(JSON.parse(outcome.output));
     expect(warnings).toEqual([expect.objectContaining({ path: 'parameters[4].unit' })]);
+  });
+});
+
+describe('the README', () => {
+  it('shows what the command says', () => {
+    const text = readFileSync(join(ROOT, 'README.md'), 'utf8');
+    const shown = /```json\n(.+?)```/s.exec(text)?.[1];
+    const { bands, largestPayload } = resultOf(fromFile);
+    expect(rounded(JSON.parse(shown ?? '{}'))).toEqual(rounded({ bands, largestPayload }));
+  });
+
+  it('has every example in its table', () => {
+    const rows = readFileSync(join(ROOT, 'README.md'), 'utf8').matchAll(/^\| ([a-z-]+) +\| /gm);
+    const named = [...rows]
+      .map(([, name]) => name)
+      .filter((name) => name.includes('-') && /[a-z]/.test(name));
+    expect(named.sort()).toEqual([...exampleNames]);
   });
 });
 

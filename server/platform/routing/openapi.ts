@@ -26,12 +26,14 @@ const PROBLEM: JsonObject = {
 };
 
 function jsonSchema(schema: z.ZodType, io: 'input' | 'output'): JsonObject {
-  const { $schema: _version, ...rest } = z.toJSONSchema(schema, {
+  const described: JsonObject = z.toJSONSchema(schema, {
     target: 'draft-2020-12',
     io,
     unrepresentable: 'any',
   });
-  return rest;
+  // The document as a whole says which version of JSON Schema it uses.
+  delete described.$schema;
+  return described;
 }
 
 /** The parameters of a path or query: one entry for each property of the schema's object. */

@@ -4,7 +4,7 @@ import { DivisorProblem } from '../contact/divisor-problem';
 import { RequirementProblem } from '../contact/requirement-problem';
 import { buildLoop } from '../loop/build-loop';
 import type { LoopMatrix } from '../loop/loop-matrix';
-import { NodeConstants } from '../loop/node-constants';
+import { NominalValues } from '../loop/nominal-values';
 import { expandLoop, type LoopPolynomial } from '../polynomial/loop-polynomial';
 import type { ComposedRequirement, ComposedStudy } from '../study';
 import type { SearchSpace } from './search-variables';
@@ -23,8 +23,10 @@ export class LoopModel {
     private readonly space: SearchSpace,
   ) {
     this.nominalParameters = Float64Array.from(study.parameters, ({ nominal }) => nominal);
-    const constants = new NodeConstants(study.program, this.nominalParameters, space.parameters);
-    this.loop = buildLoop(study.loop, (node) => constants.valueOf(node));
+    const constants = new NominalValues(study.program, this.nominalParameters, (parameter) =>
+      space.parameters.includes(parameter),
+    );
+    this.loop = buildLoop(study.loop, (node) => constants.constant(node));
     this.evaluator = new ExactEvaluator(study.program, this.nominalParameters, space.parameters);
   }
 

@@ -8,7 +8,7 @@ import { seededRandom } from '../polynomial/testing/random';
 import { buildLoop } from './build-loop';
 import type { ComposedLoop, ComposedPid } from './composed';
 import type { LoopMatrix } from './loop-matrix';
-import { NodeConstants } from './node-constants';
+import { NominalValues } from './nominal-values';
 import { add, complex, divide, modulus, multiply, polynomialAt } from './testing/complex';
 import { SAMPLE_LAWS, sampleLoop } from './testing/sample-loops';
 import { MASS, type Write, writtenLoop } from './testing/written-loop';
@@ -18,8 +18,10 @@ function build(
   parameters: readonly number[] = [],
   varying: readonly number[] = [],
 ): LoopMatrix {
-  const constants = new NodeConstants(composed.program, parameters, varying);
-  return buildLoop(composed, (node) => constants.valueOf(node));
+  const constants = new NominalValues(composed.program, parameters, (parameter) =>
+    varying.includes(parameter),
+  );
+  return buildLoop(composed, (node) => constants.constant(node));
 }
 
 function expand(

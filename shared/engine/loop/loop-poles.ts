@@ -1,3 +1,4 @@
+import { scaleByPowerOfTwo } from '../../expressions';
 import { EigenvalueSolver } from '../linalg';
 import type { LoopMatrix } from './loop-matrix';
 import { StateMatrix } from './state-matrix';
@@ -17,6 +18,7 @@ export class LoopPoles {
   private readonly matrix: StateMatrix;
   private readonly solver: EigenvalueSolver;
   private closedLeading = 1;
+  private closedExponent = 0;
 
   constructor(loop: LoopMatrix) {
     this.matrix = new StateMatrix(loop);
@@ -36,13 +38,18 @@ export class LoopPoles {
     this.matrix.evaluate(parameters);
     if (!this.solve(-1, this.closedRe, this.closedIm)) return false;
     this.closedLeading = this.matrix.leading;
+    this.closedExponent = this.matrix.leadingExponent;
     return true;
   }
 
   /** Poles with one law's loop broken, at the point of the last `closeLoop`. */
   breakLoop(law: number): boolean {
     if (!this.solve(law, this.brokenRe, this.brokenIm)) return false;
-    this.leadingRatio = this.closedLeading / this.matrix.leading;
+    const { leading, leadingExponent } = this.matrix;
+    this.leadingRatio = scaleByPowerOfTwo(
+      this.closedLeading / leading,
+      this.closedExponent - leadingExponent,
+    );
     return true;
   }
 

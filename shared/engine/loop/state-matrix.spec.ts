@@ -8,7 +8,7 @@ import { buildLoop } from './build-loop';
 import type { ComposedLoop } from './composed';
 import type { LoopMatrix } from './loop-matrix';
 import { LoopPoles } from './loop-poles';
-import { NodeConstants } from './node-constants';
+import { NominalValues } from './nominal-values';
 import { StateMatrix } from './state-matrix';
 import { complex, divide, modulus, multiply, polynomialAt } from './testing/complex';
 import { SAMPLE_LAWS, sampleLoop } from './testing/sample-loops';
@@ -19,8 +19,10 @@ function build(
   parameters: readonly number[] = [],
   varying: readonly number[] = [],
 ): LoopMatrix {
-  const constants = new NodeConstants(composed.program, parameters, varying);
-  return buildLoop(composed, (node) => constants.valueOf(node));
+  const constants = new NominalValues(composed.program, parameters, (parameter) =>
+    varying.includes(parameter),
+  );
+  return buildLoop(composed, (node) => constants.constant(node));
 }
 
 /** Coefficients of the closed and of the broken loop by exact expansion, ascending. */

@@ -1,4 +1,4 @@
-import { evaluateProgram } from '../../expressions';
+import { binaryExponent, evaluateProgram, scaleByPowerOfTwo } from '../../expressions';
 import { factorLu, solveLu } from '../linalg';
 import type { LoopMatrix } from './loop-matrix';
 
@@ -14,8 +14,12 @@ export class StateMatrix {
   readonly order: number;
   /** A, row-major order×order, valid after `assemble`. */
   readonly a: Float64Array;
-  /** det H up to a constant: the leading coefficient of det P(s); 0 where a pole has left through infinity. */
-  leading = 0;
+  /**
+   * det H = leading · 2^leadingExponent, up to a constant the leading coefficient of det P(s). In two parts, since
+   * a product of many small masses and lags leaves the range of doubles.
+   */
+  leading = 1;
+  leadingExponent = 0;
 
   private readonly values: Float64Array;
   private readonly high: Float64Array;
@@ -60,9 +64,16 @@ export class StateMatrix {
       else this.lower[row * order + this.offsets[column] + power] -= value;
     }
     const sign = factorLu(this.high, size, this.pivots);
+    if (sign === 0) return false;
     this.leading = sign;
-    for (let i = 0; i < size; i++) this.leading *= this.high[i * size + i];
-    if (sign === 0 || !Number.isFinite(this.leading) || this.leading === 0) return false;
+    this.leadingExponent = 0;
+    for (let i = 0; i < size; i++) {
+      const pivot = this.high[i * size + i];
+      if (!Number.isFinite(pivot)) return false;
+      const exponent = binaryExponent(pivot);
+      this.leading *= scaleByPowerOfTwo(pivot, -exponent);
+      this.leadingExponent += exponent;
+    }
     solveLu(this.high, size, this.pivots, this.lower, order);
     this.a.fill(0);
     for (let column = 0; column < size; column++) {

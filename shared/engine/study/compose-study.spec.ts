@@ -4,7 +4,7 @@ import { evaluateProgram, type NodeId } from '../../expressions';
 import { buildLoop } from '../loop/build-loop';
 import { composeStudy } from './compose-study';
 import type { ComposedStudy } from './composed-study';
-import { NominalValues } from './nominal-values';
+import { NominalValues } from '../loop/nominal-values';
 import { composed, faults, faultsOf, FIRST_ORDER, LIFT_TABLE, studyOf } from './testing/lift-table';
 
 /** Values of nodes at the nominal point. */

@@ -11,7 +11,7 @@ import { leadingConditions, matrixConditions, timeConditions } from './loop-cond
 import { checkLoopSize } from './loop-size';
 import { composeMachine } from './machine';
 import { composeMap } from './map';
-import { NominalValues } from './nominal-values';
+import { NominalValues } from '../loop/nominal-values';
 import { composeNames } from './parameters';
 import { composeRating } from './rating';
 import { composeRequirements } from './requirements';

@@ -11,7 +11,7 @@ import type { NodeId } from '../../expressions';
 import type { ComposedLaw, ComposedMachine, ComposedStateFeedback } from '../loop/composed';
 import type { ExpressionCompiler } from './expression-compiler';
 import type { FaultList } from './fault-list';
-import type { NominalValues } from './nominal-values';
+import type { NominalValues } from '../loop/nominal-values';
 
 /** The laws of a study; none where it has no control. */
 export function studyLaws(study: Study): readonly Law[] {

@@ -11,7 +11,7 @@ import type { ComposedHardware, ComposedLaw } from '../loop/composed';
 import { studyLaws } from './control';
 import type { ExpressionCompiler } from './expression-compiler';
 import type { FaultList } from './fault-list';
-import type { NominalValues } from './nominal-values';
+import type { NominalValues } from '../loop/nominal-values';
 
 /** Order of the Padé form where the study does not say. */
 const DEFAULT_PADE_ORDER = 2;

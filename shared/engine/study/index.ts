@@ -8,5 +8,5 @@ export type {
   ComposedTest,
 } from './composed-study';
 export { MOST_COLUMNS, MOST_STATES } from './loop-size';
-export { NominalValues } from './nominal-values';
+export { NominalValues } from '../loop/nominal-values';
 export { pointText } from './point-text';

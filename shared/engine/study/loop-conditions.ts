@@ -3,7 +3,7 @@ import { lawPath } from '../../contracts/declared-names';
 import type { ComposedLaw, ComposedMachine } from '../loop/composed';
 import type { SignCondition } from './domain/sign-condition';
 import type { HardwareTime } from './hardware';
-import type { NominalValues } from './nominal-values';
+import type { NominalValues } from '../loop/nominal-values';
 
 /** A lag or delay that varies stays above 0: at 0 the loop would lose a pole and with it its order. */
 export function timeConditions(times: readonly HardwareTime[], nominal: NominalValues): SignCondition[] {

@@ -2,7 +2,7 @@ import type { MapAnswer } from '../../contracts';
 import { haltonPoint } from '../contact/low-discrepancy';
 import { LoopProbe } from '../contact/loop-probe';
 import { buildLoop } from '../loop/build-loop';
-import { NodeConstants } from '../loop/node-constants';
+import { NominalValues } from '../loop/nominal-values';
 import type { ComposedMap, ComposedStudy } from '../study';
 import { lawOfMeasure, mapValue } from './map-measure';
 
@@ -25,8 +25,8 @@ export function* sweepMap(
     .map((_, index) => index)
     .filter((i) => study.parameters[i].hasBand || i === study.payload || i === map.x || i === map.y);
   const others = varying.filter((i) => i !== map.x && i !== map.y && study.parameters[i].hasBand);
-  const constants = new NodeConstants(study.program, nominal, varying);
-  const loop = buildLoop(study.loop, (node) => constants.valueOf(node));
+  const constants = new NominalValues(study.program, nominal, (parameter) => varying.includes(parameter));
+  const loop = buildLoop(study.loop, (node) => constants.constant(node));
   const probes = new Map<number, LoopProbe>();
   const visited = new Set<number>();
   const point = Float64Array.from(nominal);

@@ -3,7 +3,7 @@ import { isDomainIssue } from '../../../expressions/interval';
 import type { ComposedParameter } from '../composed-study';
 import type { NodeSite } from '../expression-compiler';
 import type { FaultList } from '../fault-list';
-import type { NominalValues } from '../nominal-values';
+import type { NominalValues } from '../../loop/nominal-values';
 import { pointText } from '../point-text';
 import type { BandBox } from './band-box';
 import { IntervalSearch } from './decide-by-intervals';

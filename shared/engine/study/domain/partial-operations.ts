@@ -2,7 +2,7 @@ import type { PathPart } from '../../../contracts';
 import type { NodeId, Program } from '../../../expressions';
 import { DOMAIN_REASONS } from '../evaluate-constant';
 import type { NodeSite } from '../expression-compiler';
-import type { NominalValues } from '../nominal-values';
+import type { NominalValues } from '../../loop/nominal-values';
 import type { RequiredSign, SignCondition, Subject } from './sign-condition';
 
 /**
