@@ -24,6 +24,15 @@ export default defineConfig({
       },
       {
         extends: true,
+        test: {
+          name: 'api',
+          include: ['tests/api/**/*.spec.ts'],
+          globalSetup: ['tests/api/support/cluster-setup.ts'],
+          testTimeout: 20_000,
+        },
+      },
+      {
+        extends: true,
         test: { name: 'commands', include: ['tests/commands/**/*.spec.ts'], testTimeout: 60_000 },
       },
       {

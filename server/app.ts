@@ -1,18 +1,14 @@
-import express, { type Express } from 'express';
-import { createAccess, checkRules } from './access';
+import type { Express } from 'express';
+import { checkRules, createAccess } from './access';
 import { type Database, readSchemaState } from './db';
 import { createIdentify } from './features/auth';
 import { mailRoutes } from './features/mail';
 import type { HttpConfiguration } from './platform/configuration';
 import { healthRoutes } from './platform/health';
-import { answerProblems } from './platform/http/answer-problems';
-import { servePages } from './platform/http/pages';
-import { giveContext } from './platform/http/request-context';
-import { requireSameOrigin } from './platform/http/same-origin';
-import { securityHeaders } from './platform/http/security-headers';
+import { assembleApp, usesHttps } from './platform/http/assemble';
 import { sessionCookie } from './platform/http/session-cookie';
 import type { Log } from './platform/log';
-import { mountRoutes, openApiRoute, type Route } from './platform/routing';
+import { openApiRoute, type Route } from './platform/routing';
 import type { AccessRule } from './policies';
 
 export interface AppDependencies {
@@ -44,11 +40,9 @@ async function findObstacles({ pool }: Database): Promise<string[]> {
 }
 
 /** Builds the application: where features, policies and the platform meet. Opens no socket. */
-export function createApp(dependencies: AppDependencies): App {
-  const { http, database, log, version, pages, stopping } = dependencies;
-  const https = http.origin?.startsWith('https:') === true;
-  const cookie = sessionCookie({ https });
+export function createApp({ http, database, log, version, pages, stopping }: AppDependencies): App {
   const { db } = database;
+  const cookie = sessionCookie({ https: usesHttps(http) });
 
   const features: Route<AccessRule>[] = [
     ...healthRoutes({ version, findObstacles: () => findObstacles(database) }),
@@ -57,18 +51,5 @@ export function createApp(dependencies: AppDependencies): App {
   const routes = [...features, openApiRoute(features, version)];
   checkRules(routes);
   const access = createAccess({ db, identify: createIdentify({ db, cookie }) });
-
-  const app = express();
-  app.disable('x-powered-by');
-  app.disable('etag');
-  app.set('trust proxy', [...http.trustedProxies]);
-  app.use(giveContext(log), securityHeaders({ https }), requireSameOrigin(http.origin));
-  app.use('/api', (_request, response, next) => {
-    response.set('Cache-Control', 'no-store');
-    next();
-  });
-  app.use('/api', mountRoutes({ routes, access, stopping }));
-  app.use(servePages(pages));
-  app.use(answerProblems);
-  return { express: app, routes };
+  return { express: assembleApp({ http, log, routes, access, pages, stopping }), routes };
 }

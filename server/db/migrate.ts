@@ -49,6 +49,9 @@ export async function migrate({
 
 async function migrateQueue(ownerUrl: string): Promise<void> {
   const pool = new Pool({ connectionString: ownerUrl, max: 1 });
+  // A connection that breaks while idle is no fault of the migration; the next statement would tell.
+  pool.on('error', () => undefined);
+  pool.on('connect', (client) => client.on('error', () => undefined));
   try {
     const silent = new Logger(() => () => undefined);
     await runQueueMigrations({ pgPool: pool, logger: silent });

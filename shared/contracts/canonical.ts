@@ -8,6 +8,11 @@ export function canonicalText(study: Study): string {
   return canonical(study);
 }
 
+/** The same for a part of a study, or one that is not finished. Nested as deep as the value, so bound that first. */
+export function canonicalJson(value: unknown): string {
+  return canonical(value);
+}
+
 /**
  * The canonical text of what the answers depend on: the study without its name, the labels of its parameters and its
  * map.

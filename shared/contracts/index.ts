@@ -1,4 +1,4 @@
-export { answerText, canonicalText } from './canonical';
+export { answerText, canonicalJson, canonicalText } from './canonical';
 export * from './control';
 export { checkDeclaredNames } from './declared-names';
 export { StudyFaultError, type Fault, type Warning } from './fault';

@@ -15,6 +15,9 @@ export type Product = z.infer<typeof productSchema>;
 
 export const productDraftSchema = z.object({ name: titleSchema, description: noteSchema });
 export type ProductDraft = z.infer<typeof productDraftSchema>;
+/** What of a product is to be different; what is left out stays. */
+export const productChangeSchema = productDraftSchema.partial();
+export type ProductChange = z.infer<typeof productChangeSchema>;
 
 export const memberSchema = z.object({
   personId: idSchema,

@@ -15,6 +15,10 @@ export const scenarioRevisionSchema = z.object({
 });
 export type ScenarioRevision = z.infer<typeof scenarioRevisionSchema>;
 
+/** A revision as the list of them shows it; each with its study would be a megabyte a line. */
+export const listedRevisionSchema = scenarioRevisionSchema.omit({ study: true });
+export type ListedRevision = z.infer<typeof listedRevisionSchema>;
+
 /** A person's unsaved work on a scenario; `version` rises with every save of the draft. */
 export const scenarioDraftSchema = z.object({
   baseRevision: z.int(),

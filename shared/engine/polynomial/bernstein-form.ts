@@ -36,7 +36,8 @@ export class BoundaryPolynomials {
   ) {
     const degrees = variableDegrees(polynomial);
     const sheets = form.discRadius === undefined ? form.sheets : 1;
-    this.kernel = new BernsteinKernel({ degrees, degree: form.degree, sheets, discRadius: form.discRadius });
+    const { degree, cuts, discRadius } = form;
+    this.kernel = new BernsteinKernel({ degrees, degree, sheets, cuts, discRadius });
     const slope = chartSlope(polynomial, nominal);
     this.frequencyScale = powerOfTwo(Math.max(-1000, Math.min(1000, slope)));
     const scaleExponents = widest.map((value) => (value === 0 ? 0 : binaryExponent(value)));

@@ -11,6 +11,11 @@ export interface TensorShape {
   readonly degree: number;
   /** End values of a parameter of degree one that is never split (κ or τ): the slowest index. */
   readonly sheets: number;
+  /**
+   * Where the way from the first sheet (0) to the second (1) may be cut, rising. Each piece needs a direction of its
+   * own only, so that a long way does not ask for small boxes. Left out: none.
+   */
+  readonly cuts?: readonly number[] | undefined;
   /** Undefined: one polynomial, 0 is to be excluded. β: two, abs(first) > β abs(second) is to be shown. */
   readonly discRadius: number | undefined;
 }
@@ -33,6 +38,8 @@ export class BernsteinKernel {
   private readonly strides: Int32Array;
   private readonly largest: Float64Array;
   private readonly beta: number;
+  /** Ends of the pieces between the two sheets: 0, the cuts, 1. */
+  private readonly nodes: readonly number[];
   private cosine = 0;
   private sine = 0;
 
@@ -48,6 +55,7 @@ export class BernsteinKernel {
     this.size = stride * shape.sheets;
     this.polynomials = shape.discRadius === undefined ? 1 : 2;
     this.beta = shape.discRadius ?? 0;
+    this.nodes = [0, ...(shape.sheets === 2 ? (shape.cuts ?? []) : []), 1];
     this.length = this.polynomials * (2 * this.size + this.columns);
     this.largest = new Float64Array(this.columns);
   }
@@ -64,7 +72,8 @@ export class BernsteinKernel {
 
   /** True when the whole box is shown to keep away from the boundary; false proves nothing. */
   excludes(box: Float64Array): boolean {
-    return this.polynomials === 1 ? this.excludesZero(box) : this.excludesDisc(box);
+    if (this.polynomials === 2) return this.excludesDisc(box);
+    return this.excludesZero(box) || this.excludesHalves(box, 0, this.nodes.length - 1);
   }
 
   /** The same without error radii: for measuring what they cost, never for a proof. */
@@ -102,6 +111,65 @@ export class BernsteinKernel {
         const y = sine * box[size + row + k];
         const slack = box[radii + k] + 4 * UNIT_ROUNDOFF * (Math.abs(x) + Math.abs(y));
         if (!(x + y > slack * (1 + 1e-6))) return false;
+      }
+    }
+    return true;
+  }
+
+  /** Excludes 0 from each half of the way between two nodes, or from the quarters where a half is too long, … */
+  private excludesHalves(box: Float64Array, first: number, last: number): boolean {
+    if (last - first < 2) return false;
+    const middle = (first + last) >> 1;
+    return this.excludesPiece(box, first, middle) && this.excludesPiece(box, middle, last);
+  }
+
+  private excludesPiece(box: Float64Array, first: number, last: number): boolean {
+    return (
+      this.excludesBetween(box, this.nodes[first], this.nodes[last]) || this.excludesHalves(box, first, last)
+    );
+  }
+
+  /** `excludesZero` for the part of the way between two places; the part's ends are combinations of the sheets. */
+  private excludesBetween(box: Float64Array, from: number, to: number): boolean {
+    const { size, columns } = this;
+    const half = size >> 1;
+    let leftX = (1 - from) * box[0] + from * box[half];
+    let leftY = (1 - from) * box[size] + from * box[size + half];
+    let rightX = leftX;
+    let rightY = leftY;
+    for (let i = 0; i < half; i++) {
+      for (let end = 0; end < 2; end++) {
+        const place = end === 0 ? from : to;
+        const x = (1 - place) * box[i] + place * box[half + i];
+        const y = (1 - place) * box[size + i] + place * box[size + half + i];
+        const beyondRight = rightX * y - rightY * x < 0;
+        if (leftX * y - leftY * x > 0) {
+          if (beyondRight) return false;
+          leftX = x;
+          leftY = y;
+        } else if (beyondRight) {
+          rightX = x;
+          rightY = y;
+        }
+      }
+    }
+    if (!this.bisect(leftX, leftY, rightX, rightY)) return false;
+    const { cosine, sine } = this;
+    const radii = 2 * size;
+    for (let row = 0; row < half; row += columns) {
+      for (let k = 0; k < columns; k++) {
+        const i = row + k;
+        const firstX = cosine * box[i];
+        const firstY = sine * box[size + i];
+        const secondX = cosine * box[half + i];
+        const secondY = sine * box[size + half + i];
+        const total = Math.abs(firstX) + Math.abs(firstY) + Math.abs(secondX) + Math.abs(secondY);
+        // A combination errs by no more than its sheets; a product and two sums are rounded at either end.
+        const slack = (box[radii + k] + 8 * UNIT_ROUNDOFF * total) * (1 + 1e-6);
+        const first = firstX + firstY;
+        const second = secondX + secondY;
+        if (!((1 - from) * first + from * second > slack)) return false;
+        if (!((1 - to) * first + to * second > slack)) return false;
       }
     }
     return true;
@@ -241,12 +309,14 @@ export class BernsteinKernel {
   private splitTime(box: Float64Array, right: Float64Array, start: number, radii: number): void {
     const degree = this.shape.degree;
     const end = start + 2 * this.size;
+    const { largest } = this;
+    this.measureColumns(box, start);
     for (let level = 1; level <= degree; level++) {
-      this.measureColumns(box, start);
       for (let i = degree; i >= level; i--) {
-        const larger = Math.max(this.largest[i - 1], this.largest[i]);
+        // No coefficient of an average is larger than the average of the columns' largest: no need to measure again.
+        largest[i] = 0.5 * (largest[i - 1] + largest[i]) * (1 + 4 * UNIT_ROUNDOFF);
         box[radii + i] =
-          0.5 * (box[radii + i - 1] + box[radii + i]) * (1 + 4 * UNIT_ROUNDOFF) + UNIT_ROUNDOFF * larger;
+          0.5 * (box[radii + i - 1] + box[radii + i]) * (1 + 4 * UNIT_ROUNDOFF) + UNIT_ROUNDOFF * largest[i];
       }
       right[radii + degree - level] = box[radii + degree];
       for (let row = start; row < end; row += this.columns) {
@@ -259,12 +329,14 @@ export class BernsteinKernel {
   /** Sets `largest[k]` to the largest abs(re) + abs(im) of column k of the polynomial at `start`. */
   private measureColumns(box: Float64Array, start: number): void {
     const { size, columns, largest } = this;
-    largest.fill(0);
-    for (let row = start; row < start + size; row += columns) {
-      for (let k = 0; k < columns; k++) {
-        const value = Math.abs(box[row + k]) + Math.abs(box[row + size + k]);
-        if (value > largest[k]) largest[k] = value;
+    const imaginary = start + size;
+    for (let k = 0; k < columns; k++) {
+      let top = 0;
+      for (let i = k; i < size; i += columns) {
+        const value = Math.abs(box[start + i]) + Math.abs(box[imaginary + i]);
+        if (value > top) top = value;
       }
+      largest[k] = top;
     }
   }
 
@@ -307,12 +379,14 @@ export class BernsteinKernel {
 
   /** True when the first polynomial is everywhere as small as its error radius: splitting cannot help any more. */
   isNoise(box: Float64Array): boolean {
+    const { size, columns } = this;
     const radii = this.radiusOffset(0);
-    this.measureColumns(box, 0);
-    for (let k = 0; k < this.columns; k++) {
+    for (let k = 0; k < columns; k++) {
       let allowed = 16 * box[radii + k];
-      if (this.polynomials === 2) allowed += 16 * box[radii + this.columns + k];
-      if (this.largest[k] > allowed) return false;
+      if (this.polynomials === 2) allowed += 16 * box[radii + columns + k];
+      for (let i = k; i < size; i += columns) {
+        if (Math.abs(box[i]) + Math.abs(box[size + i]) > allowed) return false;
+      }
     }
     return true;
   }

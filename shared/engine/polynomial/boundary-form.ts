@@ -29,12 +29,17 @@ export interface BoundaryForm {
   readonly exponent: number;
   /** Number of end values of κ or τ, 1 where there are none. */
   readonly sheets: number;
+  /** Where the way between the two sheets may be cut, see `TensorShape`. */
+  readonly cuts?: readonly number[];
   /** β for the modulus margin: the test is abs(first) > β abs(second); undefined: 0 must be excluded. */
   readonly discRadius: number | undefined;
   /** α = π/2 + asin ζ of the argument count; the angle one pole inside contributes. */
   readonly cosine: number;
   readonly sheetsAt: (broken: readonly bigint[], returned: readonly bigint[]) => ComplexCoefficients[];
 }
+
+/** Seven cuts make eight pieces of the range from 1 to −1. */
+const EIGHTHS = [-0.75, -0.5, -0.25, 0, 0.25, 0.5, 0.75];
 
 /** x with −x + j on the strict side of the ray of damping ratio ζ: ζ/√(1 − ζ²), rounded up by a few units. */
 export function dampingSlope(ratio: number): number {
@@ -92,6 +97,8 @@ export function boundaryForm(measure: Measure, limit: number, degree: number): B
         ...form,
         exponent: down,
         sheets: 2,
+        // Equal angles θ on τ = tan(θ/2).
+        cuts: EIGHTHS.map((part) => 0.5 - 0.5 * (tan((part * limit) / 2) / tan(limit / 2))),
         sheetsAt: (d, n) => [turned(d, n, tangent), turned(d, n, -tangent)],
       };
     }
@@ -108,12 +115,31 @@ export function gainForm(form: Omit<BoundaryForm, 'sheetsAt'>, low: number, high
     ...form,
     exponent: down,
     sheets: 2,
+    cuts: gainCuts(low, high),
     sheetsAt: (d, n) =>
       ends.map(({ mantissa, exponent }) => {
         const factor = mantissa << BigInt(exponent - down);
         return onAxis(d.map((value, k) => (value << BigInt(-down)) + n[k] * factor));
       }),
   };
+}
+
+/** Equal ratios of κ, from the middle outwards. */
+function gainCuts(low: number, high: number): number[] {
+  if (!(low < high)) return [];
+  const between = (a: number, b: number): number => Math.sqrt(a) * Math.sqrt(b);
+  const middle = between(low, high);
+  const [lower, upper] = [between(low, middle), between(middle, high)];
+  const factors = [
+    between(low, lower),
+    lower,
+    between(lower, middle),
+    middle,
+    between(middle, upper),
+    upper,
+    between(upper, high),
+  ];
+  return factors.map((factor) => (factor - low) / (high - low));
 }
 
 function sum(a: readonly bigint[], b: readonly bigint[]): bigint[] {

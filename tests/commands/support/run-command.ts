@@ -9,6 +9,7 @@ export interface Outcome {
   /** null where the process was stopped because it hung. */
   readonly status: number | null;
   readonly output: string;
+  /** Standard error without notices of the bootstrap, which may have to wait for another test's build. */
   readonly messages: string;
 }
 
@@ -29,5 +30,5 @@ export function runCommand(
       env: { ...process.env, INIT_CWD: startedIn ?? ROOT },
     },
   );
-  return { status, output: stdout, messages: stderr };
+  return { status, output: stdout, messages: stderr.replace(/^tareline: .*\n/gm, '') };
 }

@@ -22,11 +22,18 @@ export function directPoint(model: StudyModel, values: ArrayLike<number>): Direc
   let decayRate = Infinity;
   let dampingRatio = 1;
   let scale = 0;
+  const sizes = closed.re.map((re, i) => Math.hypot(re, closed.im[i]));
+  for (const size of sizes) scale = Math.max(scale, size);
   for (let i = 0; i < closed.re.length; i++) {
-    const size = Math.hypot(closed.re[i], closed.im[i]);
+    // A pole at 0 exactly comes out on either side of it.
+    const size = sizes[i] < 1e-12 * scale ? 0 : sizes[i];
+    if (size === 0) {
+      decayRate = Math.min(decayRate, 0);
+      dampingRatio = Math.min(dampingRatio, 0);
+      continue;
+    }
     decayRate = Math.min(decayRate, -closed.re[i]);
-    dampingRatio = Math.min(dampingRatio, size === 0 ? 0 : -closed.re[i] / size);
-    scale = Math.max(scale, size);
+    dampingRatio = Math.min(dampingRatio, -closed.re[i] / size);
   }
   const scanners = new Map<number, DirectMargins | undefined>();
   const scanner = (law: number): DirectMargins | undefined => {
