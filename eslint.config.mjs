@@ -1,4 +1,5 @@
 import eslint from '@eslint/js';
+import angular from 'angular-eslint';
 import boundaries from 'eslint-plugin-boundaries';
 import prettier from 'eslint-config-prettier';
 import { readdirSync } from 'node:fs';
@@ -47,7 +48,7 @@ const allShared = [
   'shared/engine',
 ];
 const sharedWithoutEngine = allShared.filter((part) => part !== 'shared/engine');
-const angular = ['@angular/*', 'rxjs', 'tslib'];
+const angularPackages = ['@angular/*', 'rxjs', 'tslib'];
 
 /**
  * Who may import what. `parts` are imported at any file, `faces` by their index.ts only, `packages` by name
@@ -107,17 +108,21 @@ const importTable = [
     node: true,
   },
 
-  { from: 'app/ui', parts: ['shared/units'], packages: [...angular, 'd3', 'd3-*'] },
-  { from: 'app/core', parts: ['app/ui', ...sharedWithoutEngine], packages: angular },
-  { from: 'app/forms', parts: ['app/ui', ...sharedWithoutEngine], packages: [...angular, '@ngx-formly/*'] },
-  { from: 'app/engine', parts: sharedWithoutEngine, packages: angular },
+  { from: 'app/ui', parts: ['shared/units'], packages: [...angularPackages, 'd3', 'd3-*'] },
+  { from: 'app/core', parts: ['app/ui', ...sharedWithoutEngine], packages: angularPackages },
+  {
+    from: 'app/forms',
+    parts: ['app/ui', ...sharedWithoutEngine],
+    packages: [...angularPackages, '@ngx-formly/*'],
+  },
+  { from: 'app/engine', parts: sharedWithoutEngine, packages: angularPackages },
   { from: 'app/engine/worker', parts: ['app/engine', ...allShared] },
   {
     from: 'app/feature',
     parts: ['app/ui', 'app/core', 'app/forms', 'app/engine', ...sharedWithoutEngine],
-    packages: [...angular, '@ngx-formly/*'],
+    packages: [...angularPackages, '@ngx-formly/*'],
   },
-  { from: 'app/shell', parts: ['app/core', 'app/ui', ...sharedWithoutEngine], packages: angular },
+  { from: 'app/shell', parts: ['app/core', 'app/ui', ...sharedWithoutEngine], packages: angularPackages },
   {
     from: 'app',
     parts: [
@@ -129,7 +134,7 @@ const importTable = [
       'app/feature',
       ...sharedWithoutEngine,
     ],
-    packages: [...angular, '@ngx-formly/*'],
+    packages: [...angularPackages, '@ngx-formly/*'],
   },
 
   {
@@ -180,7 +185,9 @@ const importRules = {
           ...importPolicies,
           {
             from: { file: { categories: 'spec' } },
-            allow: { to: { module: { origin: 'external', source: ['vitest', 'fast-check'] } } },
+            allow: {
+              to: { module: { origin: 'external', source: ['vitest', 'fast-check', '@testing-library/*'] } },
+            },
           },
         ],
       },
@@ -248,6 +255,36 @@ export default tseslint.config(
         'error',
         { allowNumber: true, allowBoolean: true },
       ],
+    },
+  },
+  {
+    files: ['src/**/*.ts'],
+    extends: [angular.configs.tsRecommended],
+    processor: angular.processInlineTemplates,
+    rules: {
+      '@angular-eslint/component-selector': [
+        'error',
+        [
+          { type: 'element', prefix: 'app', style: 'kebab-case' },
+          { type: 'attribute', prefix: 'app', style: 'camelCase' },
+        ],
+      ],
+      '@angular-eslint/directive-selector': [
+        'error',
+        { type: 'attribute', prefix: 'app', style: 'camelCase' },
+      ],
+      '@angular-eslint/prefer-on-push-component-change-detection': 'error',
+      '@angular-eslint/prefer-signals': 'error',
+    },
+  },
+  {
+    files: ['src/**/*.html'],
+    extends: [angular.configs.templateRecommended, angular.configs.templateAccessibility],
+    rules: {
+      '@angular-eslint/template/eqeqeq': 'error',
+      '@angular-eslint/template/button-has-type': 'error',
+      // The content security policy refuses style attributes; [style.x] sets the property itself.
+      '@angular-eslint/template/no-inline-styles': ['error', { allowNgStyle: false, allowBindToStyle: true }],
     },
   },
   { files: ['{src,server,shared,tests}/**/*.{ts,mjs}'], ...importRules },

@@ -33,6 +33,15 @@ export default defineConfig({
       },
       {
         extends: true,
+        test: {
+          name: 'recovery',
+          include: ['tests/recovery/**/*.spec.ts'],
+          globalSetup: ['tests/api/support/cluster-setup.ts'],
+          testTimeout: 60_000,
+        },
+      },
+      {
+        extends: true,
         test: { name: 'commands', include: ['tests/commands/**/*.spec.ts'], testTimeout: 60_000 },
       },
       {

@@ -1,14 +1,17 @@
 import { readFileSync } from 'node:fs';
 import { createServer, type Server } from 'node:http';
 import { isIPv6, type AddressInfo } from 'node:net';
+import { availableParallelism } from 'node:os';
 import { join } from 'node:path';
 import { createApp } from './app';
-import { connectDatabase, requireCurrentSchema } from './db';
+import { connectDatabase, createEventFeed, listen as listenToDatabase, requireCurrentSchema } from './db';
 import { startMailDelivery } from './features/mail';
+import { createEngine } from './jobs';
 import type { Configuration } from './platform/configuration';
 import type { Log } from './platform/log';
 import { smtpTransport } from './platform/mail/smtp-transport';
 import { packageRoot } from './platform/package-root';
+import { startWork } from './work';
 
 /** How long requests under way may take when the server stops. */
 const PATIENCE_MS = 10_000;
@@ -18,6 +21,8 @@ export interface ServeOptions {
   /** The application's role. */
   readonly databaseUrl: string;
   readonly log: Log;
+  /** Whether this process also works on the queue, as it does unless stated; runs need somebody who does. */
+  readonly works?: boolean;
 }
 
 export interface RunningServer {
@@ -98,35 +103,46 @@ function programVersion(): string {
  * @throws ListenError where the address cannot be had
  * @throws SchemaMismatchError where the database is not up to date
  */
-export async function serve({ configuration, databaseUrl, log }: ServeOptions): Promise<RunningServer> {
+export async function serve(options: ServeOptions): Promise<RunningServer> {
+  const { configuration, databaseUrl, log, works = true } = options;
   const { http, mail } = configuration;
   const stopping = new AbortController();
-  const database = connectDatabase({ url: databaseUrl, log });
+  /** How to end what is running, the last one first. */
+  const endings: (() => Promise<void>)[] = [];
+  const stop = async () => {
+    stopping.abort();
+    for (const end of endings) await end();
+  };
   try {
+    const database = connectDatabase({ url: databaseUrl, log });
+    endings.unshift(() => database.close());
     await requireCurrentSchema(database.pool);
+    const listener = await listenToDatabase({ url: databaseUrl, channel: 'run_events', log });
+    endings.unshift(() => listener.close());
+    const engine = createEngine({ threads: Math.max(2, availableParallelism() - 1), ready: 1, log });
+    endings.unshift(() => engine.close());
+    if (works) {
+      const work = await startWork({ database, log });
+      endings.unshift(() => work.stop());
+    }
     const app = createApp({
-      ...{ http, database, log },
+      ...{ http, database, engine, log },
+      events: createEventFeed(database.db, listener),
       version: programVersion(),
       pages: join(packageRoot, 'dist', 'web'),
       stopping: stopping.signal,
     });
+    if (mail !== undefined) {
+      const delivery = startMailDelivery({ db: database.db, transport: smtpTransport(mail), log });
+      endings.unshift(() => delivery.stop());
+    }
     const server = createServer(app.express);
     const { port } = await listen(server, http.host, http.port);
-    const delivery =
-      mail === undefined
-        ? undefined
-        : startMailDelivery({ db: database.db, transport: smtpTransport(mail), log });
-    return {
-      address: http.origin ?? `http://${isIPv6(http.host) ? `[${http.host}]` : http.host}:${port}`,
-      stop: async () => {
-        stopping.abort();
-        await close(server);
-        await delivery?.stop();
-        await database.close();
-      },
-    };
+    endings.unshift(() => close(server));
+    const host = isIPv6(http.host) ? `[${http.host}]` : http.host;
+    return { address: http.origin ?? `http://${host}:${port}`, stop };
   } catch (error) {
-    await database.close();
+    await stop();
     throw error;
   }
 }

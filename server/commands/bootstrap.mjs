@@ -29,6 +29,15 @@ const bundles = new Map([
   ['database', { entry: 'server/commands/database.ts', packages: 'outside' }],
 ]);
 
+/**
+ * What commands run in threads of their own, from the file that stands beside theirs.
+ *
+ * @type {ReadonlyMap<string, { name: string, entry: string, packages: 'inside' | 'outside' }[]>}
+ */
+const threads = new Map([
+  ['start', [{ name: 'engine-worker', entry: 'server/jobs/worker/engine-worker.ts', packages: 'inside' }]],
+]);
+
 /** Commands that check the project. */
 const checks = ['test', 'types', 'lint'];
 
@@ -41,6 +50,9 @@ async function runBundle(name, lockDigest, rest) {
   const bundle = bundles.get(name);
   if (bundle === undefined) throw new SetupFailure(`no bundle ${name}`);
   const { freshBundle } = await import('./bootstrap/bundle.mjs');
+  for (const thread of threads.get(name) ?? []) {
+    await freshBundle(root, thread.name, thread.entry, lockDigest, thread.packages);
+  }
   const file = await freshBundle(root, name, bundle.entry, lockDigest, bundle.packages);
   process.argv = [process.execPath, file, ...rest];
   await import(pathToFileURL(file).href);

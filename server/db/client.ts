@@ -49,5 +49,9 @@ export function connectDatabase({
   });
   // A connection that breaks while idle is replaced by the pool; without a listener it would end the process.
   pool.on('error', (error) => log.warn({ error }, 'an idle connection to the database broke'));
+  // So would one that breaks while it is lent out and no statement is under way.
+  pool.on('connect', (client) => {
+    client.on('error', (error) => log.debug({ error }, 'a connection to the database broke'));
+  });
   return { db: drizzle(pool, { schema, casing: CASING }), pool, url, close: () => pool.end() };
 }

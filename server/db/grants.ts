@@ -20,4 +20,20 @@ export async function grantToApplication(client: ClientBase, role: string): Prom
     `grant select on all tables in schema drizzle to ${app}`,
   ];
   for (const statement of statements) await client.query(statement);
+  await openQueueRows(client, app);
+}
+
+/**
+ * The queue's tables show no rows to anybody but their owner (row level security without any policy); the
+ * application's role works with them too.
+ */
+async function openQueueRows(client: ClientBase, app: string): Promise<void> {
+  const { rows } = await client.query<{ name: string }>(`
+    select relname as name from pg_class
+    where relnamespace = 'graphile_worker'::regnamespace and relrowsecurity`);
+  for (const { name } of rows) {
+    const table = `graphile_worker.${escapeIdentifier(name)}`;
+    await client.query(`drop policy if exists application on ${table}`);
+    await client.query(`create policy application on ${table} to ${app} using (true) with check (true)`);
+  }
 }

@@ -54,7 +54,8 @@ export const routes: Routes = [
           },
           {
             path: 'mail',
-            loadComponent: () => import('./features/people/outgoing-mail').then((page) => page.OutgoingMailPage),
+            loadComponent: () =>
+              import('./features/people/outgoing-mail').then((page) => page.OutgoingMailPage),
           },
         ],
       },

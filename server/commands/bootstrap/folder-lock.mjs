@@ -2,6 +2,7 @@ import { mkdirSync, mkdtempSync, readdirSync, renameSync, rmdirSync, rmSync, wri
 import { dirname, join } from 'node:path';
 import process from 'node:process';
 import { setTimeout as wait } from 'node:timers/promises';
+import { isAlive } from './process-state.mjs';
 
 const POLL_MS = 100;
 
@@ -28,20 +29,6 @@ function tryAcquire(lock) {
     rmSync(prepared, { recursive: true });
     if (codeOf(error) === 'ENOTEMPTY' || codeOf(error) === 'EEXIST') return false;
     throw error;
-  }
-}
-
-/**
- * Whether a process of that id lives, whoever owns it.
- *
- * @param {number} pid
- */
-export function isAlive(pid) {
-  try {
-    process.kill(pid, 0);
-    return true;
-  } catch (error) {
-    return codeOf(error) === 'EPERM';
   }
 }
 

@@ -2,6 +2,7 @@ import {
   appendFileSync,
   chmodSync,
   chownSync,
+  existsSync,
   mkdirSync,
   readFileSync,
   renameSync,
@@ -10,6 +11,8 @@ import {
 } from 'node:fs';
 import { dirname, join } from 'node:path';
 import process from 'node:process';
+import { setTimeout as wait } from 'node:timers/promises';
+import { isAlive } from '../bootstrap/process-state.mjs';
 import { SetupFailure } from '../bootstrap/setup-failure.mjs';
 import { findFreePort } from './free-port';
 import type { Programs } from './programs';
@@ -19,7 +22,8 @@ import { runAs, type SystemUser } from './system-user';
 export const OWNER_ROLE = 'tareline';
 
 const START_PATIENCE_SECONDS = 60;
-const START_ATTEMPTS = 3;
+const START_ATTEMPTS = 6;
+const PAUSE_MS = 300;
 
 /** A database server of our own: its data, and who runs it by which programs. */
 export interface Cluster {
@@ -32,8 +36,6 @@ export interface ClusterSettings {
   readonly ownerPassword: string;
   /** Lines of postgresql.conf. */
   readonly settings: readonly string[];
-  /** Wait until everything is on the disk. Only what may be lost does without. */
-  readonly sync: boolean;
 }
 
 /** Passwords are asked for even on loopback: the machine may have other users. */
@@ -55,7 +57,7 @@ function complain(what: string, output: string): SetupFailure {
  */
 export async function createCluster(
   { data, programs, user }: Cluster,
-  { ownerPassword, settings, sync }: ClusterSettings,
+  { ownerPassword, settings }: ClusterSettings,
 ): Promise<void> {
   const prepared = `${data}.new`;
   const passwordFile = join(dirname(data), 'initial-password');
@@ -70,7 +72,8 @@ export async function createCluster(
     const { status, output } = await runAs(user, programs.initdb, [
       ...['--pgdata', prepared, '--username', OWNER_ROLE, '--pwfile', passwordFile],
       ...['--auth', 'scram-sha-256', '--encoding', 'UTF8', '--locale', 'C.UTF-8'],
-      ...(sync ? [] : ['--no-sync']),
+      // Nothing of anybody's stands in a new cluster; what is written later waits for the disk by itself.
+      '--no-sync',
     ]);
     if (status !== 0) throw complain('the database could not be made', output);
   } finally {
@@ -92,11 +95,24 @@ export interface RunningServer {
  *
  * @returns undefined where none runs, also where one has left its file behind
  */
-export async function findRunning({ data, programs, user }: Cluster): Promise<RunningServer | undefined> {
-  const { status } = await runAs(user, programs.control, ['status', '--pgdata', data]);
-  if (status !== 0) return undefined;
-  const [pid, , , port] = readFileSync(join(data, 'postmaster.pid'), 'utf8').split('\n');
-  return { pid: Number(pid), port: Number(port) };
+export function findRunning({ data }: Cluster): RunningServer | undefined {
+  const file = join(data, 'postmaster.pid');
+  if (!existsSync(file)) return undefined;
+  const [pid, folder, , port] = readFileSync(file, 'utf8').split('\n');
+  const server = { pid: Number(pid), port: Number(port) };
+  if (folder === data && isAlive(server.pid) && isServer(server.pid)) return server;
+  // The server would take another process of that id, or the mere entry of its own, for a living server.
+  rmSync(file);
+  return undefined;
+}
+
+/** Ids are given again: after a restart of the machine the one in the file may be anybody's. */
+function isServer(pid: number): boolean {
+  try {
+    return readFileSync(`/proc/${pid}/comm`, 'utf8').trim() === 'postgres';
+  } catch {
+    return true;
+  }
 }
 
 async function tryStart({ data, programs, user }: Cluster, port: number): Promise<string | undefined> {
@@ -118,10 +134,12 @@ export async function startCluster(cluster: Cluster, wanted?: number): Promise<R
   let output: string | undefined;
   for (let attempt = 1; attempt <= START_ATTEMPTS; attempt++) {
     output = await tryStart(cluster, port);
-    const running = await findRunning(cluster);
+    const running = findRunning(cluster);
     if (running !== undefined) return running;
-    // Another process may have taken the port between the choice and the start.
+    // Another process may have taken the port between the choice and the start; or processes of a server that
+    // was killed have yet to notice.
     port = await findFreePort();
+    await wait(PAUSE_MS);
   }
   throw complain('the database server does not start', `${output ?? ''}\n${endOfLog(cluster)}`);
 }

@@ -2,7 +2,8 @@ import { existsSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import process from 'node:process';
 import { APPLICATION_ROLE, ensureApplicationRole, ensureDatabase } from '../../db/roles';
-import { isAlive, withFolderLock } from '../bootstrap/folder-lock.mjs';
+import { withFolderLock } from '../bootstrap/folder-lock.mjs';
+import { isAlive } from '../bootstrap/process-state.mjs';
 import {
   type Cluster,
   createCluster,
@@ -103,10 +104,9 @@ export async function openPrivateDatabase(root: string): Promise<ReadyDatabase> 
     const ownerPassword = keptPassword(files.ownerPassword);
     const applicationPassword = keptPassword(files.applicationPassword);
     if (madeBy(files.data) === undefined) {
-      await createCluster(cluster, { ownerPassword, settings: [], sync: true });
+      await createCluster(cluster, { ownerPassword, settings: [] });
     }
-    const server =
-      (await findRunning(cluster)) ?? (await startCluster(cluster, await rememberedPort(files.port)));
+    const server = findRunning(cluster) ?? (await startCluster(cluster, await rememberedPort(files.port)));
     writeFileSync(files.port, String(server.port));
     const keeps = becomeKeeper(files.keeper);
     await ensureDatabase(urlOf(server.port, OWNER_ROLE, ownerPassword, 'postgres'), DATABASE);
@@ -137,7 +137,7 @@ function endings(cluster: Cluster, server: RunningServer, files: Files, keeps: b
 /** Stops the private database of a checkout, whoever started it. Tells whether one ran. */
 export async function stopPrivateDatabase(root: string): Promise<boolean> {
   const { files, cluster } = locate(root);
-  if (madeBy(files.data) === undefined || (await findRunning(cluster)) === undefined) return false;
+  if (madeBy(files.data) === undefined || findRunning(cluster) === undefined) return false;
   await stopCluster(cluster);
   rmSync(files.keeper, { force: true });
   return true;

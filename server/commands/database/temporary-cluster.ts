@@ -3,7 +3,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import process from 'node:process';
 import { APPLICATION_ROLE, ensureApplicationRole } from '../../db/roles';
-import { isAlive } from '../bootstrap/folder-lock.mjs';
+import { isAlive } from '../bootstrap/process-state.mjs';
 import {
   type Cluster,
   createCluster,
@@ -68,7 +68,7 @@ export async function createTemporaryCluster(): Promise<TemporaryCluster> {
   const applicationPassword = newPassword();
   const removeFolder = () => rmSync(folder, { recursive: true, force: true, maxRetries: 5 });
   try {
-    await createCluster(cluster, { ownerPassword, settings: FAST_AND_LOOSE, sync: false });
+    await createCluster(cluster, { ownerPassword, settings: FAST_AND_LOOSE });
     const { pid, port } = await startCluster(cluster);
     const ownerUrl = (database: string) => urlOf(port, OWNER_ROLE, ownerPassword, database);
     await ensureApplicationRole(ownerUrl('postgres'), applicationPassword);
@@ -85,7 +85,7 @@ export async function createTemporaryCluster(): Promise<TemporaryCluster> {
       },
     };
   } catch (error) {
-    if ((await findRunning(cluster)) !== undefined) await stopCluster(cluster);
+    if (findRunning(cluster) !== undefined) await stopCluster(cluster);
     removeFolder();
     throw error;
   }

@@ -1,5 +1,6 @@
 import { sql } from 'drizzle-orm';
-import { check, index, integer, pgEnum, pgTable, real, text, uuid } from 'drizzle-orm/pg-core';
+import { check, index, integer, jsonb, pgEnum, pgTable, real, text, uuid } from 'drizzle-orm/pg-core';
+import type { RunFigures } from '../../../shared/contracts/api';
 import { moment, primaryKeyUuid, writtenAt } from './columns';
 import { people } from './people';
 import { scenarioRevisions } from './scenario-revisions';
@@ -30,8 +31,10 @@ export const runs = pgTable(
     attempts: integer().notNull().default(0),
     /** Share of the work that is done, 0 to 1. */
     progress: real().notNull().default(0),
-    /** The result file's text. */
+    /** The result file's text, without the map. */
     result: text(),
+    /** What lists show of the result, so that they need not read it. */
+    figures: jsonb().$type<RunFigures>(),
     error: text(),
   },
   ({ scenarioRevisionId, state, answerHash, requestedBy, finishedAt, progress, result, error }) => [

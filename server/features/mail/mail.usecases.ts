@@ -1,7 +1,8 @@
+import type { OutgoingMail } from '../../../shared/contracts/api';
 import { type Db, type Executor, inTransaction } from '../../db';
 import type { Log } from '../../platform/log';
 import type { Letter, MailTransport } from '../../platform/mail/mail-transport';
-import { insertLetter, markFailed, markSent, takeDueLetter } from './mail.repository';
+import { insertLetter, markFailed, markSent, selectLetters, takeDueLetter } from './mail.repository';
 
 const FIRST_PAUSE_SECONDS = 30;
 const LONGEST_PAUSE_SECONDS = 6 * 3600;
@@ -9,6 +10,19 @@ const LONGEST_PAUSE_SECONDS = 6 * 3600;
 /** Puts a letter into the outbox; in the transaction that causes it, so that neither stands without the other. */
 export async function postLetter(tx: Executor, letter: Letter): Promise<void> {
   await insertLetter(tx, letter);
+}
+
+const MOST_LETTERS = 200;
+
+/** The newest letters, sent or not. */
+export async function listLetters({ db }: { readonly db: Db }): Promise<OutgoingMail[]> {
+  const letters = await selectLetters(db, MOST_LETTERS);
+  return letters.map(({ id, createdAt, recipient, subject, text, sentAt, lastError }) => ({
+    ...{ id, subject, text },
+    at: createdAt.toISOString(),
+    to: recipient,
+    state: sentAt !== null ? 'sent' : lastError !== null ? 'failed' : 'waiting',
+  }));
 }
 
 export interface DeliverDependencies {

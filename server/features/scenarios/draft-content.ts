@@ -24,7 +24,9 @@ function isDeeperThan(root: object, limit: number): boolean {
   for (let depth = 1; level.length > 0; depth++) {
     if (depth > limit) return true;
     level = level.flatMap((container) =>
-      Object.values(container).filter((entry): entry is object => typeof entry === 'object' && entry !== null),
+      Object.values(container).filter(
+        (entry): entry is object => typeof entry === 'object' && entry !== null,
+      ),
     );
   }
   return false;

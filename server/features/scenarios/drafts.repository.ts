@@ -34,18 +34,23 @@ export interface DraftContent {
   readonly content: string;
 }
 
+const kept = { version: scenarioDrafts.version, at: scenarioDrafts.savedAt };
+/** Undefined where the draft did not have the version it was to have. */
+type Kept = { version: number; at: Date } | undefined;
+
 const FIRST_VERSIONS = 2 ** 30;
 
 /**
  * A new draft, unless there is one. It begins with a version that no earlier draft is likely to have had: a window
  * that still knows a discarded draft must not take this one for it.
  */
-export async function insertDraft(db: Executor, key: DraftKey, draft: DraftContent): Promise<boolean> {
-  const { rowCount } = await db
+export async function insertDraft(db: Executor, key: DraftKey, draft: DraftContent): Promise<Kept> {
+  const [row] = await db
     .insert(scenarioDrafts)
     .values({ ...key, ...draft, version: randomInt(1, FIRST_VERSIONS) })
-    .onConflictDoNothing();
-  return rowCount === 1;
+    .onConflictDoNothing()
+    .returning(kept);
+  return row;
 }
 
 /** Sets the draft where it still has that version. */
@@ -54,12 +59,13 @@ export async function updateDraft(
   key: DraftKey,
   version: number,
   draft: DraftContent,
-): Promise<boolean> {
-  const { rowCount } = await db
+): Promise<Kept> {
+  const [row] = await db
     .update(scenarioDrafts)
     .set({ ...draft, version: sql`${scenarioDrafts.version} + 1`, savedAt: sql`now()` })
-    .where(and(isDraft(key), eq(scenarioDrafts.version, version)));
-  return rowCount === 1;
+    .where(and(isDraft(key), eq(scenarioDrafts.version, version)))
+    .returning(kept);
+  return row;
 }
 
 /** @param version undefined: whatever it is */

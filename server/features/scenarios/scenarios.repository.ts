@@ -1,6 +1,6 @@
 import { and, eq, inArray, isNull, sql } from 'drizzle-orm';
 import type { Executor, Tx } from '../../db';
-import { products, reviews, scenarioRevisions, scenarios, variants } from '../../db/schema';
+import { products, reviews, runs, scenarioRevisions, scenarios, variants } from '../../db/schema';
 
 /** A living scenario with the names around it. */
 export async function findScenario(db: Executor, scenarioId: string) {
@@ -61,12 +61,32 @@ export async function renameScenario(db: Executor, scenarioId: string, name: str
   await db.update(scenarios).set({ name }).where(eq(scenarios.id, scenarioId));
 }
 
-export async function archiveScenarios(tx: Tx, ids: readonly string[]): Promise<void> {
-  if (ids.length === 0) return;
+export async function archiveScenario(tx: Tx, scenarioId: string): Promise<void> {
   await tx
     .update(scenarios)
     .set({ archivedAt: sql`now()` })
-    .where(inArray(scenarios.id, [...ids]));
+    .where(eq(scenarios.id, scenarioId));
+}
+
+/** @returns the names of those that were living until now */
+export async function archiveScenariosOf(tx: Tx, variantIds: readonly string[]): Promise<string[]> {
+  const rows = await tx
+    .update(scenarios)
+    .set({ archivedAt: sql`now()` })
+    .where(and(inArray(scenarios.variantId, [...variantIds]), isNull(scenarios.archivedAt)))
+    .returning({ name: scenarios.name });
+  return rows.map(({ name }) => name);
+}
+
+/** The living scenarios of variants that were run, and so perhaps reviewed: they go only when they are named. */
+export function listUsedScenarios(db: Executor, variantIds: readonly string[]) {
+  return db
+    .selectDistinct({ variantId: scenarios.variantId, name: scenarios.name })
+    .from(scenarios)
+    .innerJoin(scenarioRevisions, eq(scenarioRevisions.scenarioId, scenarios.id))
+    .innerJoin(runs, eq(runs.scenarioRevisionId, scenarioRevisions.id))
+    .where(and(inArray(scenarios.variantId, [...variantIds]), isNull(scenarios.archivedAt)))
+    .orderBy(scenarios.name);
 }
 
 /** Whether a scenario waits for a reviewer, or holds an approval that stands. */
@@ -75,9 +95,7 @@ export async function hasStandingReview(db: Executor, scenarioId: string): Promi
     .select({ id: reviews.id })
     .from(reviews)
     .innerJoin(scenarioRevisions, eq(scenarioRevisions.id, reviews.scenarioRevisionId))
-    .where(
-      and(eq(scenarioRevisions.scenarioId, scenarioId), inArray(reviews.state, ['asked', 'approved'])),
-    )
+    .where(and(eq(scenarioRevisions.scenarioId, scenarioId), inArray(reviews.state, ['asked', 'approved'])))
     .limit(1);
   return found.length > 0;
 }

@@ -36,7 +36,7 @@ export function assembleApp<Rule>(options: AssembleOptions<Rule>): Express {
     response.set('Cache-Control', 'no-store');
     next();
   });
-  app.use('/api', mountRoutes({ routes, access, stopping }));
+  app.use('/api', mountRoutes({ routes, access, origin: http.origin, stopping }));
   app.use(servePages(pages));
   app.use(answerProblems);
   return app;

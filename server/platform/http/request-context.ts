@@ -1,6 +1,7 @@
 import { randomUUID } from 'node:crypto';
 import type { RequestHandler, Response } from 'express';
 import type { Log } from '../log';
+import { withoutTokens } from '../opaque-token';
 
 /** What belongs to one request and is no part of it. */
 export interface RequestContext {
@@ -22,7 +23,7 @@ export function requestContext(response: Response): RequestContext {
 
 /**
  * Gives every request an id, told in X-Request-Id, and writes one line when it is answered. Neither query nor
- * headers nor bodies are logged: they may hold what is secret.
+ * headers nor bodies are logged: they may hold what is secret, and a token in the path is left out.
  */
 export function giveContext(log: Log): RequestHandler {
   return (request, response, next) => {
@@ -33,7 +34,7 @@ export function giveContext(log: Log): RequestHandler {
     response.set('X-Request-Id', requestId);
     const started = performance.now();
     const { method } = request;
-    const path = request.originalUrl.split('?', 1)[0];
+    const path = withoutTokens(request.originalUrl.split('?', 1)[0]);
     response.on('close', () => {
       const milliseconds = Math.round(performance.now() - started);
       const status = response.headersSent ? response.statusCode : 'none';

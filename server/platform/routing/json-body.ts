@@ -23,13 +23,19 @@ function asProblem(error: unknown): Problem | undefined {
   }
 }
 
+function hasBody(request: Request): boolean {
+  return request.get('transfer-encoding') !== undefined || Number(request.get('content-length') ?? 0) > 0;
+}
+
 /**
  * Reads the JSON body of a request; called after the policy, so that nobody makes the server read what they may
  * not send.
  *
+ * @returns undefined where there is none
  * @throws Problem for a body that is not JSON, not called JSON, or too large
  */
 export async function readJsonBody(request: Request, response: Response): Promise<unknown> {
+  if (!hasBody(request)) return undefined;
   if (request.is('application/json') === false) throw unsupportedMediaType();
   await new Promise<void>((resolve, reject) => {
     parse(request, response, (error?: unknown) => {

@@ -13,6 +13,8 @@ import { readParts } from './validate';
 export interface MountOptions<Rule> {
   readonly routes: readonly Route<Rule>[];
   readonly access: AccessControl<Rule>;
+  /** The address that people use; undefined on loopback, where it is the one that the request names. */
+  readonly origin: string | undefined;
   /** Aborted when the server stops: ends streams that would keep it from stopping. */
   readonly stopping: AbortSignal;
 }
@@ -67,8 +69,7 @@ function sendJson(
 
 function handlerOf<Rule>(
   route: Route<Rule>,
-  access: AccessControl<Rule>,
-  stopping: AbortSignal,
+  { access, origin, stopping }: Pick<MountOptions<Rule>, 'access' | 'origin' | 'stopping'>,
 ): RequestHandler {
   const byAddress = route.limits.filter(({ by }) => by === 'address').map(limitMiddleware);
   const byContent = route.limits.filter(({ by }) => by !== 'address').map(limitMiddleware);
@@ -96,6 +97,7 @@ function handlerOf<Rule>(
       ...{ params: params?.data, query, body, caller, product, requestId, log },
       address: request.ip ?? '',
       userAgent: request.get('user-agent') ?? '',
+      origin: origin ?? `http://${request.get('host') ?? ''}`,
       signal: signalOf(response, stopping),
     };
     const { answer } = route;
@@ -116,13 +118,13 @@ function checkRoutes<Rule>(routes: readonly Route<Rule>[]): void {
 }
 
 /** The routes of the API, to be mounted under /api; anything else there is answered 404 or 405. */
-export function mountRoutes<Rule>({ routes, access, stopping }: MountOptions<Rule>): Router {
+export function mountRoutes<Rule>({ routes, ...options }: MountOptions<Rule>): Router {
   checkRoutes(routes);
   const router = Router({ caseSensitive: true, strict: true });
   const methods = new Map<string, string[]>();
   for (const route of routes) {
     const method = route.method.toLowerCase() as Lowercase<typeof route.method>;
-    router[method](route.path, handlerOf(route, access, stopping));
+    router[method](route.path, handlerOf(route, options));
     const shape = route.path.replace(/:\w+/g, ':x');
     methods.set(shape, [...(methods.get(shape) ?? []), route.method]);
   }

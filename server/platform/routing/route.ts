@@ -25,6 +25,8 @@ export interface Call<Rule, Params, Query, Body> {
   /** Of the client, as far as the trusted proxies tell. */
   readonly address: string;
   readonly userAgent: string;
+  /** The address of the server as the client uses it, for links: `https://tareline.example`. */
+  readonly origin: string;
   /** Aborted when the client has gone, or the server is stopping. */
   readonly signal: AbortSignal;
   readonly log: Log;
@@ -86,6 +88,7 @@ export interface CheckedCall {
   readonly requestId: string;
   readonly address: string;
   readonly userAgent: string;
+  readonly origin: string;
   readonly signal: AbortSignal;
   readonly log: Log;
 }

@@ -9,7 +9,8 @@ const trimmed = (what: string, most: number) =>
     .string({ error: `must be ${what}` })
     .trim()
     .min(1, { error: `must be ${what}` })
-    .max(most, { error: `must have at most ${most} characters` });
+    .max(most, { error: `must have at most ${most} characters` })
+    .regex(/^\P{Cc}*$/u, { error: 'must be one line of text' });
 
 /** A name that people gave to a thing of theirs. */
 export const titleSchema = trimmed('a name', 120);
@@ -25,7 +26,9 @@ export const passwordSchema = z
 export const noteSchema = z
   .string({ error: 'must be a text' })
   .trim()
-  .max(4000, { error: 'must have at most 4000 characters' });
+  .max(4000, { error: 'must have at most 4000 characters' })
+  // No database holds it in a text.
+  .refine((text) => !text.includes('\0'), { error: 'must not hold the character U+0000' });
 
 /** Roles in the organisation: administrators invite, set roles and read the audit log. */
 export const ORGANISATION_ROLES = ['administrator', 'member'] as const;

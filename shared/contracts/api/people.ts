@@ -14,6 +14,10 @@ export const personSchema = z.object({
 });
 export type Person = z.infer<typeof personSchema>;
 
+/** Somebody who may be given a role. */
+export const directoryEntrySchema = z.object({ id: idSchema, name: z.string(), email: z.string() });
+export type DirectoryEntry = z.infer<typeof directoryEntrySchema>;
+
 export const inviteSchema = z.object({
   email: emailSchema,
   name: titleSchema,

@@ -6,11 +6,8 @@ export const RUN_STATES = ['queued', 'running', 'done', 'failed', 'cancelled'] a
 export const runStateSchema = z.enum(RUN_STATES);
 export type RunState = z.infer<typeof runStateSchema>;
 
-/** What lists and ladders show of a run. Figures are in the payload's unit. */
-export const runSummarySchema = z.object({
-  id: idSchema,
-  state: runStateSchema,
-  at: instantSchema,
+/** What lists and ladders show of a run's result, in the payload's unit; null where there is no such figure. */
+export const runFiguresSchema = z.object({
   unit: z.string().nullable(),
   verdict: z.enum(['holds', 'fails', 'undecided']).nullable(),
   proof: z.enum(['proved', 'sampled']).nullable(),
@@ -22,6 +19,15 @@ export const runSummarySchema = z.object({
   failsAt: z.number().nullable(),
   plate: z.number().nullable(),
   limiting: z.string().nullable(),
+});
+export type RunFigures = z.infer<typeof runFiguresSchema>;
+
+/** A run as lists and ladders show it; without figures (all null) until it is done. */
+export const runSummarySchema = z.object({
+  id: idSchema,
+  state: runStateSchema,
+  at: instantSchema,
+  ...runFiguresSchema.shape,
 });
 export type RunSummary = z.infer<typeof runSummarySchema>;
 
@@ -42,12 +48,22 @@ export const runSchema = z.object({
 });
 export type Run = z.infer<typeof runSchema>;
 
+/** A run as the list of a scenario's runs shows it, newest first. */
+export const listedRunSchema = runSchema
+  .omit({ result: true })
+  .extend({ figures: runFiguresSchema.nullable() });
+export type ListedRun = z.infer<typeof listedRunSchema>;
+export const runListSchema = z.object({ items: z.array(listedRunSchema) });
+export const runMapSchema = mapAnswerSchema;
+
 /** A draft computed and not kept. `supersedes` names the stream of previews: a newer one cancels an older one. */
 export const previewSchema = z.object({ study: z.unknown(), supersedes: z.string().max(80).optional() });
 export type Preview = z.infer<typeof previewSchema>;
 export const previewMapSchema = previewSchema.extend({
   columns: z.int().min(2).max(201),
   rows: z.int().min(2).max(201),
+  /** Milliseconds: the finest grid up to the stated one that is done by then. Left out: the stated one. */
+  within: z.int().min(1).max(10_000).optional(),
 });
 export type PreviewMap = z.infer<typeof previewMapSchema>;
 export const previewAnswerSchema = resultSchema;

@@ -44,10 +44,24 @@ export type Scenario = z.infer<typeof scenarioSchema>;
 export const newScenarioSchema = z.object({ name: titleSchema, study: z.unknown() });
 export type NewScenario = z.infer<typeof newScenarioSchema>;
 
+/** Revisions are numbered from 1, versions of drafts rise from wherever they begin; 0 stands for none. */
+const countedSchema = z
+  .int()
+  .min(0)
+  .max(2 ** 31 - 1);
+
 /** Saves a revision on top of `baseRevision`; answered by 409 with the newer one where that is not the head. */
-export const saveScenarioSchema = z.object({ baseRevision: z.int(), study: z.unknown(), note: noteSchema });
+export const saveScenarioSchema = z.object({
+  baseRevision: countedSchema,
+  study: z.unknown(),
+  note: noteSchema,
+});
 export type SaveScenario = z.infer<typeof saveScenarioSchema>;
 
 /** Saves the draft on top of `version` (0: none yet); answered by 409 with the newer one. */
-export const saveDraftSchema = z.object({ baseRevision: z.int(), version: z.int(), study: z.unknown() });
+export const saveDraftSchema = z.object({
+  baseRevision: countedSchema,
+  version: countedSchema,
+  study: z.unknown(),
+});
 export type SaveDraft = z.infer<typeof saveDraftSchema>;

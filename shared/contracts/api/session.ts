@@ -20,7 +20,13 @@ export type SignedIn = z.infer<typeof signedInSchema>;
 
 /** A wrong password must not fail by its length: only its presence is checked here. */
 export const signInSchema = z.object({
-  email: z.string({ error: 'must be an e-mail address' }).trim().toLowerCase().max(254),
+  email: z
+    .string({ error: 'must be an e-mail address' })
+    .trim()
+    .toLowerCase()
+    .max(254)
+    // No database holds a control character such as U+0000 in a text, nor does an address.
+    .regex(/^\P{Cc}*$/u, { error: 'must be an e-mail address' }),
   password: z.string({ error: 'must be a password' }).min(1, { error: 'must be a password' }).max(256),
 });
 export type SignIn = z.infer<typeof signInSchema>;

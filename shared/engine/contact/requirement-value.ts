@@ -4,6 +4,9 @@ import type { LoopProbe } from './loop-probe';
 /** Decay rates are brought to this scale (1/s) where an unstable point needs a number at all. */
 const UNSTABLE_SCALE = 1;
 
+/** A pole whose modulus is this share of the largest one is not told from a pole at 0. */
+const AT_ORIGIN = 1e-13;
+
 /**
  * How far a requirement is kept at a visited point: 0 at the limit, negative where it fails, in units of the limit
  * where that is positive. Used to steer a search; every claim made from it is certified apart.
@@ -63,8 +66,12 @@ export function limitingFrequency(probe: LoopProbe, measure: Measure): number | 
   if (measure === 'dampingRatio') {
     let least = Infinity;
     let frequency = 0;
+    let largest = 0;
+    for (let i = 0; i < order; i++) largest = Math.max(largest, Math.abs(closedRe[i]), Math.abs(closedIm[i]));
     for (let i = 0; i < order; i++) {
-      const modulus = Math.sqrt(closedRe[i] * closedRe[i] + closedIm[i] * closedIm[i]);
+      const size = Math.sqrt(closedRe[i] * closedRe[i] + closedIm[i] * closedIm[i]);
+      // The direction of a pole at the origin is nothing but rounding.
+      const modulus = size <= AT_ORIGIN * largest ? 0 : size;
       const ratio = modulus === 0 ? 0 : -closedRe[i] / modulus;
       if (ratio < least) {
         least = ratio;

@@ -38,7 +38,7 @@ export interface BoundaryForm {
   readonly sheetsAt: (broken: readonly bigint[], returned: readonly bigint[]) => ComplexCoefficients[];
 }
 
-/** Seven cuts make eight pieces of the range from 1 to −1. */
+/** Seven cuts make eight pieces of the range from −1 to 1. */
 const EIGHTHS = [-0.75, -0.5, -0.25, 0, 0.25, 0.5, 0.75];
 
 /** x with −x + j on the strict side of the ray of damping ratio ζ: ζ/√(1 − ζ²), rounded up by a few units. */
@@ -98,7 +98,7 @@ export function boundaryForm(measure: Measure, limit: number, degree: number): B
         exponent: down,
         sheets: 2,
         // Equal angles θ on τ = tan(θ/2).
-        cuts: EIGHTHS.map((part) => 0.5 - 0.5 * (tan((part * limit) / 2) / tan(limit / 2))),
+        cuts: EIGHTHS.map((part) => 0.5 + 0.5 * (tan((part * limit) / 2) / tan(limit / 2))),
         sheetsAt: (d, n) => [turned(d, n, tangent), turned(d, n, -tangent)],
       };
     }

@@ -1,14 +1,30 @@
-import { Injectable, inject } from '@angular/core';
-import { MatSnackBar } from '@angular/material/snack-bar';
+import { Injectable, signal } from '@angular/core';
 import { refusalText } from './api';
+
+export interface Notice {
+  readonly text: string;
+  /** An act did not happen: read out at once, and it stays until it is closed. */
+  readonly refused: boolean;
+}
+
+const SHOWN_MILLISECONDS = 6000;
 
 /** Short news at the foot of the page, read out by screen readers. */
 @Injectable({ providedIn: 'root' })
 export class Notices {
-  private readonly bar = inject(MatSnackBar);
+  private readonly shown = signal<Notice | undefined>(undefined);
+  private ending: ReturnType<typeof setTimeout> | undefined;
+
+  readonly notice = this.shown.asReadonly();
 
   say(text: string): void {
-    this.bar.open(text, 'Close', { duration: 6000, politeness: 'polite' });
+    this.show({ text, refused: false });
+    this.ending = setTimeout(() => this.close(), SHOWN_MILLISECONDS);
+  }
+
+  close(): void {
+    clearTimeout(this.ending);
+    this.shown.set(undefined);
   }
 
   /** Does something and says so, or says why not. The answer tells which. */
@@ -18,8 +34,13 @@ export class Notices {
       if (done !== undefined) this.say(done);
       return true;
     } catch (error) {
-      this.bar.open(refusalText(error), 'Close', { politeness: 'assertive' });
+      this.show({ text: refusalText(error), refused: true });
       return false;
     }
+  }
+
+  private show(notice: Notice): void {
+    clearTimeout(this.ending);
+    this.shown.set(notice);
   }
 }

@@ -5,12 +5,7 @@ import { Failed, type Failure } from '../ui/states';
 @Component({
   selector: 'app-forbidden',
   imports: [Failed],
-  template: `
-    <div class="page page-narrow">
-      <h1 class="unseen">Not for your role</h1>
-      <app-failed [failure]="failure" />
-    </div>
-  `,
+  template: ` <app-failed [failure]="failure" [page]="true" /> `,
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class Forbidden {

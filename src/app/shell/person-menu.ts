@@ -27,6 +27,7 @@ const THEME_WORDS: Record<Theme, string> = { system: 'As the system', light: 'Li
       <div role="group" aria-label="Theme">
         @for (theme of themes; track theme) {
           <button
+            type="button"
             mat-menu-item
             role="menuitemradio"
             [attr.aria-checked]="choice.theme() === theme"
@@ -38,8 +39,8 @@ const THEME_WORDS: Record<Theme, string> = { system: 'As the system', light: 'Li
         }
       </div>
       <hr />
-      <button mat-menu-item (click)="shortcuts.emit()">Keyboard shortcuts</button>
-      <button mat-menu-item (click)="signOut()">Sign out</button>
+      <button type="button" mat-menu-item (click)="shortcuts.emit()">Keyboard shortcuts</button>
+      <button type="button" mat-menu-item (click)="signOut()">Sign out</button>
     </mat-menu>
   `,
   styles: `

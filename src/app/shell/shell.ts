@@ -1,6 +1,15 @@
-import { DOCUMENT, ChangeDetectionStrategy, Component, ElementRef, computed, inject, viewChild } from '@angular/core';
+import type { ElementRef } from '@angular/core';
+import { DOCUMENT, ChangeDetectionStrategy, Component, computed, inject, viewChild } from '@angular/core';
 import { takeUntilDestroyed, toSignal } from '@angular/core/rxjs-interop';
-import { NavigationEnd, NavigationError, NavigationStart, Router, RouterLink, RouterLinkActive, RouterOutlet } from '@angular/router';
+import {
+  NavigationEnd,
+  NavigationError,
+  NavigationStart,
+  Router,
+  RouterLink,
+  RouterLinkActive,
+  RouterOutlet,
+} from '@angular/router';
 import { filter, map } from 'rxjs';
 import { Page } from '../core/page';
 import { Session } from '../core/session';
@@ -8,12 +17,13 @@ import { pageShortcuts } from '../core/shortcuts';
 import { ThemeChoice } from '../core/theme';
 import { Logo } from '../ui/figures';
 import { Failed, type Failure } from '../ui/states';
+import { NoticeBar } from './notice-bar';
 import { PersonMenu } from './person-menu';
 import { ShortcutHelp } from './shortcut-help';
 
 @Component({
   selector: 'app-shell',
-  imports: [Failed, Logo, PersonMenu, RouterLink, RouterLinkActive, RouterOutlet, ShortcutHelp],
+  imports: [Failed, Logo, NoticeBar, PersonMenu, RouterLink, RouterLinkActive, RouterOutlet, ShortcutHelp],
   templateUrl: './shell.html',
   styleUrl: './shell.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,

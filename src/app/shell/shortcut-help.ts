@@ -1,4 +1,5 @@
-import { ChangeDetectionStrategy, Component, ElementRef, inject, viewChild } from '@angular/core';
+import type { ElementRef } from '@angular/core';
+import { ChangeDetectionStrategy, Component, inject, viewChild } from '@angular/core';
 import { Shortcuts } from '../core/shortcuts';
 
 /** Every shortcut of the open page, and the switch that turns them off. */
@@ -21,7 +22,7 @@ import { Shortcuts } from '../core/shortcuts';
         <input type="checkbox" [checked]="shortcuts.on()" (change)="toggle()" />
         Use shortcuts of single keys
       </label>
-      <form method="dialog"><button class="button">Close</button></form>
+      <form method="dialog"><button type="submit" class="button">Close</button></form>
     </dialog>
   `,
   styles: `

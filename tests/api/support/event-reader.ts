@@ -32,7 +32,7 @@ function readFrame(frame: string): ReadEvent | undefined {
   };
 }
 
-async function* framesOf(incoming: IncomingMessage): AsyncGenerator<ReadEvent> {
+async function* framesOf(incoming: IncomingMessage): AsyncGenerator<ReadEvent, undefined> {
   let text = '';
   for await (const chunk of incoming) {
     text += String(chunk);
@@ -43,6 +43,7 @@ async function* framesOf(incoming: IncomingMessage): AsyncGenerator<ReadEvent> {
       if (event !== undefined) yield event;
     }
   }
+  return undefined;
 }
 
 export function openEvents(url: string, headers: Record<string, string> = {}): Promise<EventReader> {
@@ -54,8 +55,8 @@ export function openEvents(url: string, headers: Record<string, string> = {}): P
         status: incoming.statusCode ?? 0,
         contentType: incoming.headers['content-type'],
         next: async () => {
-          const { value, done } = await events.next();
-          return done === true ? undefined : value;
+          const result = await events.next();
+          return result.done === true ? undefined : result.value;
         },
         leave: () => outgoing.destroy(),
       });

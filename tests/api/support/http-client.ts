@@ -32,7 +32,7 @@ function parsed(text: string): unknown {
 export class HttpClient {
   constructor(
     readonly address: string,
-    private readonly cookie?: string,
+    readonly cookie?: string,
   ) {}
 
   get(path: string, options?: SendOptions): Promise<Answer> {
@@ -58,31 +58,34 @@ export class HttpClient {
   send(method: string, path: string, { body, text, headers = {} }: SendOptions = {}): Promise<Answer> {
     const content = text ?? (body === undefined ? undefined : JSON.stringify(body));
     const all: Record<string, string | undefined> = {
-      ...(content === undefined
-        ? {}
-        : { 'content-type': 'application/json', 'content-length': String(Buffer.byteLength(content)) }),
+      'content-length': String(Buffer.byteLength(content ?? '')),
+      ...(content === undefined ? {} : { 'content-type': 'application/json' }),
       ...(this.cookie === undefined ? {} : { cookie: this.cookie }),
       origin: this.address,
       ...headers,
     };
     const sent = Object.fromEntries(Object.entries(all).filter(([, value]) => value !== undefined));
     return new Promise((resolve, reject) => {
-      const outgoing = request(`${this.address}${path}`, { method, headers: sent, agent: false }, (incoming) => {
-        const chunks: Buffer[] = [];
-        incoming.on('data', (chunk: Buffer) => chunks.push(chunk));
-        incoming.on('error', reject);
-        incoming.on('end', () => {
-          const received = Buffer.concat(chunks).toString();
-          const json = parsed(received);
-          resolve({
-            status: incoming.statusCode ?? 0,
-            headers: incoming.headers,
-            text: received,
-            body: json,
-            read: (schema) => schema.parse(json),
+      const outgoing = request(
+        `${this.address}${path}`,
+        { method, headers: sent, agent: false },
+        (incoming) => {
+          const chunks: Buffer[] = [];
+          incoming.on('data', (chunk: Buffer) => chunks.push(chunk));
+          incoming.on('error', reject);
+          incoming.on('end', () => {
+            const received = Buffer.concat(chunks).toString();
+            const json = parsed(received);
+            resolve({
+              status: incoming.statusCode ?? 0,
+              headers: incoming.headers,
+              text: received,
+              body: json,
+              read: (schema) => schema.parse(json),
+            });
           });
-        });
-      });
+        },
+      );
       outgoing.on('error', reject);
       outgoing.end(content);
     });

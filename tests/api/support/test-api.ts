@@ -1,8 +1,10 @@
 import { join } from 'node:path';
 import { afterAll, beforeAll } from 'vitest';
 import { type App, createApp } from '../../../server/app';
-import { connectDatabase, type Database } from '../../../server/db';
+import { connectDatabase, createEventFeed, type Database, listen } from '../../../server/db';
+import { createEngine } from '../../../server/jobs';
 import type { ProductRole } from '../../../server/policies';
+import { startWork } from '../../../server/work';
 import { HttpClient } from './http-client';
 import { type Listening, listenLocally } from './listening';
 import { memoryLog } from './memory-log';
@@ -20,10 +22,12 @@ export interface TestApi {
   /** Somebody without a session. */
   readonly anybody: HttpClient;
   person(options?: PersonOptions): Promise<TestPerson>;
-  product(
-    createdBy: TestPerson,
-    roles?: readonly (readonly [TestPerson, ProductRole])[],
-  ): Promise<string>;
+  product(createdBy: TestPerson, roles?: readonly (readonly [TestPerson, ProductRole])[]): Promise<string>;
+}
+
+export interface UseApiOptions {
+  readonly clock?: () => Date;
+  readonly works?: boolean;
 }
 
 /**
@@ -34,39 +38,55 @@ export interface TestApi {
  *       const administrator = await api().person({ organisationRole: 'administrator' });
  *       expect((await administrator.get('/api/mail')).status).toBe(200);
  *     });
+ *
+ * @param clock of the application, for tests of what expires
+ * @param works whether somebody works on the queue
  */
-export function useApi(): () => TestApi {
+export function useApi({ clock, works = false }: UseApiOptions = {}): () => TestApi {
   let api: TestApi | undefined;
-  let listening: Listening | undefined;
   const stopping = new AbortController();
+  /** How to end what is running, the last one first. */
+  const endings: (() => Promise<void>)[] = [];
 
   beforeAll(async () => {
     const testDatabase = await createTestDatabase();
+    endings.unshift(() => testDatabase.drop());
     const { log, lines } = memoryLog();
-    const database = connectDatabase({ url: testDatabase.url, log });
+    const { url } = testDatabase;
+    const database = connectDatabase({ url, log });
+    endings.unshift(() => database.close());
+    const listener = await listen({ url, channel: 'run_events', log });
+    endings.unshift(() => listener.close());
+    const engine = createEngine({ threads: 1, log });
+    endings.unshift(() => engine.close());
+    if (works) {
+      const work = await startWork({ database, log, threads: 1 });
+      endings.unshift(() => work.stop());
+    }
     const app = createApp({
       http: { origin: undefined, trustedProxies: ['loopback'] },
-      ...{ database, log },
+      ...{ database, engine, log },
+      events: createEventFeed(database.db, listener),
       version: '0.0.0-test',
       pages: join(import.meta.dirname, 'no-pages'),
       stopping: stopping.signal,
+      clock,
     });
-    listening = await listenLocally(app.express);
+    const listening: Listening = await listenLocally(app.express);
+    endings.unshift(() => listening.close());
     const { address } = listening;
     api = {
       ...{ app, database, testDatabase, address },
       logLines: lines,
       anybody: new HttpClient(address),
-      person: (options) => makePerson(database.db, address, options),
+      person: (options) => makePerson(database.db, address, options, clock?.()),
       product: (createdBy, roles) => makeProduct(database.db, createdBy, roles),
     };
   });
 
   afterAll(async () => {
     stopping.abort();
-    await listening?.close();
-    await api?.database.close();
-    await api?.testDatabase.drop();
+    for (const end of endings) await end();
   });
 
   return () => {

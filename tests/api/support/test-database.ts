@@ -35,6 +35,6 @@ export async function createTestDatabase(template = TEMPLATE): Promise<TestDatab
   return {
     url: withDatabase(applicationUrl, name),
     ownerUrl: withDatabase(ownerUrl, name),
-    drop: () => asAdministrator(`drop database ${name} with (force)`),
+    drop: () => asAdministrator(`drop database if exists ${name} with (force)`),
   };
 }

@@ -27,11 +27,16 @@ export class TestPerson extends HttpClient {
   }
 }
 
-/** Makes a person with a living session; written to the database, without the routes that are under test. */
+/**
+ * Makes a person with a living session; written to the database, without the routes that are under test.
+ *
+ * @param now when the session begins
+ */
 export async function makePerson(
   db: Db,
   address: string,
   { name = 'Test Person', email, organisationRole = 'member', mayCreateProducts = false }: PersonOptions = {},
+  now = new Date(),
 ): Promise<TestPerson> {
   const [person] = await db
     .insert(people)
@@ -46,7 +51,9 @@ export async function makePerson(
   await db.insert(sessions).values({
     personId: person.id,
     tokenHash: hashToken(token),
-    expiresAt: new Date(Date.now() + SESSION_MS),
+    createdAt: now,
+    lastSeenAt: now,
+    expiresAt: new Date(now.getTime() + SESSION_MS),
   });
   const [cookie] = sessionCookie({ https: false }).give(token, SESSION_MS).split(';');
   return new TestPerson(address, cookie, person.id, person.email);

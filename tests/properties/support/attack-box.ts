@@ -77,7 +77,13 @@ export class BoxAttack {
       worst = Math.min(worst, kept / units[k]);
       const tolerance = noise(requirement, point, rate);
       if (kept < -tolerance || Number.isNaN(kept)) {
-        this.failures.push({ claim: box.claim, requirement, values: [...values], slack: kept, noise: tolerance });
+        this.failures.push({
+          claim: box.claim,
+          requirement,
+          values: [...values],
+          slack: kept,
+          noise: tolerance,
+        });
       }
     });
     return { at: fraction.slice(), worst };
@@ -88,7 +94,7 @@ export class BoxAttack {
     const { random, effort } = this;
     let best = start;
     let step = 0.1;
-    for (let used = 0; used < effort.steps && step > 1e-7; ) {
+    for (let used = 0; used < effort.steps && step > 1e-7;) {
       let gained = false;
       for (let direction = 0; direction <= 2 * wide.length; direction++) {
         const trial = best.at.slice();

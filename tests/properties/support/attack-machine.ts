@@ -1,5 +1,5 @@
-import { readStudyValue, type Result } from '../../../shared/contracts';
-import { analyse, composeStudy } from '../../../shared/engine';
+import type { Result } from '../../../shared/contracts';
+import { analyseValue } from './analyse-value';
 import { type AttackEffort, BoxAttack, type FoundFailure } from './attack-box';
 import { checkAnswers } from './check-answers';
 import { claimedBoxes } from './claimed-boxes';
@@ -13,11 +13,7 @@ export interface AttackOutcome {
   readonly faults: readonly string[];
 }
 
-/** The result of a study by the whole path: as JSON text, read, composed, analysed. */
-export function resultOf(model: StudyModel): Result {
-  const { study } = readStudyValue(JSON.parse(JSON.stringify(studyJson(model))));
-  return analyse(composeStudy(study), { studyHash: '', clock: () => performance.now(), map: false });
-}
+export const resultOf = (model: StudyModel): Result => analyseValue(studyJson(model));
 
 /** Analyses a study, attacks everything that is claimed to hold and checks everything that is said to fail. */
 export function attackMachine(model: StudyModel, seed: number, effort: AttackEffort): AttackOutcome {

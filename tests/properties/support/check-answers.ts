@@ -56,7 +56,13 @@ class AnswerCheck {
     if (answer === null || model.payload === undefined) return;
     const payload = model.parameters[model.payload];
     const end = 'searchedUpTo' in answer ? answer.searchedUpTo : answer.searchedDownTo;
-    this.checkSides(key, answer, end, (a, b) => GAP * Math.max(Math.abs(a), Math.abs(b), Math.abs(payload.nominal)), sign);
+    this.checkSides(
+      key,
+      answer,
+      end,
+      (a, b) => GAP * Math.max(Math.abs(a), Math.abs(b), Math.abs(payload.nominal)),
+      sign,
+    );
     if (answer.provedTo !== null && sign * (answer.provedTo - payload.nominal) < 0) {
       this.fault(key, `proved to ${answer.provedTo} on the wrong side of ${payload.nominal}`);
     }
@@ -80,7 +86,12 @@ class AnswerCheck {
 
   private checkSides(
     key: string,
-    { provedTo, failsAt, undecided, witness }: Pick<UpwardAnswer, 'provedTo' | 'failsAt' | 'undecided' | 'witness'>,
+    {
+      provedTo,
+      failsAt,
+      undecided,
+      witness,
+    }: Pick<UpwardAnswer, 'provedTo' | 'failsAt' | 'undecided' | 'witness'>,
     end: number,
     gap: (a: number, b: number) => number,
     sign: number,
@@ -112,7 +123,10 @@ class AnswerCheck {
     });
   }
 
-  private checkWitness(key: string, answer: Pick<UpwardAnswer, 'requirement' | 'witness' | 'frequency' | 'reason'>): void {
+  private checkWitness(
+    key: string,
+    answer: Pick<UpwardAnswer, 'requirement' | 'witness' | 'frequency' | 'reason'>,
+  ): void {
     const { model, rate } = this;
     const point = directPoint(model, this.values(answer.witness ?? {}));
     const requirement = requirementsOf(model).filter(({ measure }) => measure === answer.requirement);
@@ -127,18 +141,36 @@ class AnswerCheck {
     if (answer.reason !== undefined) {
       if (answer.frequency !== null) this.fault(key, 'a pole at infinity has a frequency');
     } else if (typeof answer.frequency === 'number' && point !== undefined) {
-      this.checkFrequency(key, answer.requirement ?? '', answer.frequency, point, lawOf(model, requirement[0]));
+      this.checkFrequency(
+        key,
+        answer.requirement ?? '',
+        answer.frequency,
+        point,
+        lawOf(model, requirement[0]),
+      );
     }
   }
 
-  private checkFrequency(key: string, measure: string, frequency: number, point: DirectPoint, law: number): void {
+  private checkFrequency(
+    key: string,
+    measure: string,
+    frequency: number,
+    point: DirectPoint,
+    law: number,
+  ): void {
     const { re, im } = point.closed;
+    // With a pole at the origin rounding decides which pole looks worst.
+    if (re.some((x, i) => Math.hypot(x, im[i]) < 1e-12 * point.scale)) return;
     const near = (value: number): boolean =>
       Math.abs(value - frequency) <= 1e-3 * Math.abs(frequency) + 1e-5 * point.scale;
     const scanner = point.scanner(law);
     let plausible: boolean;
     if (measure === 'dampingRatio') {
-      plausible = re.some((x, i) => near(Math.hypot(x, im[i])) && -x / Math.hypot(x, im[i]) < point.dampingRatio + 1e-3);
+      plausible = re.some((x, i) => {
+        const size = Math.hypot(x, im[i]);
+        const ratio = size < 1e-12 * point.scale ? 0 : -x / size;
+        return near(size) && ratio < point.dampingRatio + 1e-3;
+      });
     } else if (measure === 'stability' || measure === 'decayRate' || scanner === undefined) {
       plausible = re.some((x, i) => near(Math.abs(im[i])) && -x < point.decayRate + 1e-3 * point.scale);
     } else {
@@ -169,8 +201,10 @@ class AnswerCheck {
     }
     if (bandStretch === null) return;
     const { provedTo, failsAt } = bandStretch;
-    if (bands.verdict === 'holds' && failsAt !== null && failsAt < 1) this.fault('bands', 'holds, but the stretch fails below 1');
-    if (bands.verdict === 'fails' && provedTo !== null && provedTo >= 1) this.fault('bands', 'fails, but is stretched to 1');
+    if (bands.verdict === 'holds' && failsAt !== null && failsAt < 1)
+      this.fault('bands', 'holds, but the stretch fails below 1');
+    if (bands.verdict === 'fails' && provedTo !== null && provedTo >= 1)
+      this.fault('bands', 'fails, but is stretched to 1');
     if (bands.verdict === 'undecided' && ((failsAt ?? 2) <= 1 || (provedTo ?? 0) >= 1)) {
       this.fault('bands', 'undecided, but the stretch decides');
     }
@@ -181,11 +215,13 @@ class AnswerCheck {
     const { nominal } = result;
     if (direct === undefined) return;
     const left = direct.closed.re.map((re, i) => ({ re, im: direct.closed.im[i] }));
-    if (left.length !== nominal.poles.length) this.fault('nominal', `${nominal.poles.length} poles, not ${left.length}`);
+    if (left.length !== nominal.poles.length)
+      this.fault('nominal', `${nominal.poles.length} poles, not ${left.length}`);
     for (const pole of nominal.poles) {
       const distances = left.map(({ re, im }) => Math.hypot(re - pole.re, im - pole.im));
       const nearest = Math.min(...distances);
-      if (!(nearest < 1e-6 * direct.scale)) this.fault('nominal', `pole ${pole.re}, ${pole.im} is off by ${nearest}`);
+      if (!(nearest < 1e-6 * direct.scale))
+        this.fault('nominal', `pole ${pole.re}, ${pole.im} is off by ${nearest}`);
       left.splice(distances.indexOf(nearest), 1);
     }
     const agree = (name: string, theirs: number | null, own: number, tolerance = 1e-5): void => {
@@ -194,7 +230,7 @@ class AnswerCheck {
       this.fault('nominal', `${name} ${theirs}, not ${own}`);
     };
     agree('decay rate', nominal.decayRate, direct.decayRate, 1e-5 + (1e-7 * direct.scale) / this.rate);
-    agree('damping ratio', nominal.dampingRatio, direct.dampingRatio);
+    if (direct.dampingRatio !== 0) agree('damping ratio', nominal.dampingRatio, direct.dampingRatio);
     const margins = direct.margins(0);
     if (this.model.laws.length === 0 || margins === undefined) return;
     agree('phase margin', nominal.phaseMargin, margins.phase);

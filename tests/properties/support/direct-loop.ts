@@ -3,7 +3,7 @@ import type { HardwareModel, LawModel, MachineModel, StudyModel } from './study-
 import type { Term } from './term';
 
 /** Room for the states of a loop. */
-const MOST_STATES = 32;
+const MOST_STATES = 16;
 
 /** A signal as a row: its dependence on the states, then on the commanded inputs. */
 type Signal = Float64Array;
@@ -67,6 +67,7 @@ class LoopAtPoint {
   }
 
   private newState(): number {
+    if (this.derivatives.length === MOST_STATES) throw new RangeError(`more than ${MOST_STATES} states`);
     this.derivatives.push(this.zero());
     return this.derivatives.length - 1;
   }

@@ -1,7 +1,7 @@
 import type { Poles } from './direct-poles';
 
 /** Frequencies per scan that do not belong to a pole. */
-const GRID = 120;
+const GRID = 90;
 
 export interface Margins {
   gainUp: number;
@@ -56,24 +56,33 @@ export class DirectMargins {
   }
 
   measure(): Margins {
-    this.placeGrid();
-    const { omegas } = this;
-    const count = omegas.length;
-    const res = new Float64Array(count);
-    const ims = new Float64Array(count);
-    for (let k = 0; k < count; k++) {
-      this.evaluate(omegas[k]);
-      res[k] = this.re;
-      ims[k] = this.im;
+    const omegas = this.frequencies();
+    const [kept, res, ims] = [omegas, omegas, omegas].map(({ length }) => new Float64Array(length));
+    let count = 0;
+    for (const omega of omegas) {
+      this.evaluate(omega);
+      // At a pole of L on the axis itself there is no value.
+      if (!Number.isFinite(this.re) || !Number.isFinite(this.im)) continue;
+      kept[count] = omega;
+      res[count] = this.re;
+      ims[count] = this.im;
+      count++;
     }
-    const result: Margins = { gainUp: Infinity, gainDown: 0, phase: Math.PI, modulus: Infinity, delay: Infinity };
-    this.gain(result, res, ims);
-    this.phase(result, res, ims);
-    this.modulus(result, res, ims);
+    this.omegas = kept.subarray(0, count);
+    const result: Margins = {
+      gainUp: Infinity,
+      gainDown: 0,
+      phase: Math.PI,
+      modulus: Infinity,
+      delay: Infinity,
+    };
+    this.gain(result, res.subarray(0, count), ims.subarray(0, count));
+    this.phase(result, res.subarray(0, count), ims.subarray(0, count));
+    this.modulus(result, res.subarray(0, count), ims.subarray(0, count));
     return result;
   }
 
-  private placeGrid(): void {
+  private frequencies(): Float64Array {
     let least = Infinity;
     let most = 0;
     for (const { re, im } of [this.closed, this.broken]) {
@@ -99,12 +108,7 @@ export class DirectMargins {
     const from = Math.log(least * 1e-3);
     const to = Math.log(most * 1e3);
     for (let k = 0; k < GRID; k++) all.push(Math.exp(from + ((to - from) * k) / (GRID - 1)));
-    // At a pole of L on the axis itself there is no value.
-    this.omegas = Float64Array.from(all).filter((omega) => {
-      this.evaluate(omega);
-      return Number.isFinite(this.re) && Number.isFinite(this.im);
-    });
-    this.omegas.sort();
+    return Float64Array.from(all).sort();
   }
 
   /** All zeros of a value of 1 + L over the grid, pairs between neighbouring points included; visits each. */

@@ -12,7 +12,12 @@ export type LawKind = LawModel['law'];
 const rounded = (value: number): number => Number(value.toPrecision(6));
 
 /** A law of a kind with gains of a plausible size; a state feedback places the poles of the machine at its nominal. */
-export function randomLaw(draft: StudyDraft, made: RandomMachine, kind: LawKind, model: StudyModel): LawModel {
+export function randomLaw(
+  draft: StudyDraft,
+  made: RandomMachine,
+  kind: LawKind,
+  model: StudyModel,
+): LawModel {
   const { random } = draft;
   const { stiffness, frequency, machine } = made;
   const input = 'u';
@@ -37,14 +42,20 @@ export function randomLaw(draft: StudyDraft, made: RandomMachine, kind: LawKind,
     }
     case 'state-feedback': {
       const states =
-        machine.order === 1 ? [...machine.names] : [...machine.names, ...machine.names.map((name) => `${name}'`)];
-      const gains = placedGains(model, random, frequency) ?? states.map(() => stiffness * random.between(0, 0.5));
+        machine.order === 1
+          ? [...machine.names]
+          : [...machine.names, ...machine.names.map((name) => `${name}'`)];
+      const gains =
+        placedGains(model, random, frequency) ?? states.map(() => stiffness * random.between(0, 0.5));
       return {
         law: 'state-feedback',
         input,
         gains: states.map((state, i) => ({ state, gain: constant(rounded(gains[i])) })),
         ...(random.chance(0.4) && {
-          integral: { output, gain: constant(rounded(sign * stiffness * frequency * random.decade(-2.5, -1))) },
+          integral: {
+            output,
+            gain: constant(rounded(sign * stiffness * frequency * random.decade(-2.5, -1))),
+          },
         }),
       };
     }
@@ -59,7 +70,11 @@ export function randomLaw(draft: StudyDraft, made: RandomMachine, kind: LawKind,
           input,
           output,
           numerator: [gain, 2 * damping * zero * gain, gain * zero * zero].map(rounded).map(constant),
-          denominator: [ONE, constant(rounded(pole)), random.chance(0.5) ? constant(0) : constant(rounded(pole * 0.1))],
+          denominator: [
+            ONE,
+            constant(rounded(pole)),
+            random.chance(0.5) ? constant(0) : constant(rounded(pole * 0.1)),
+          ],
         };
       }
       return {
@@ -107,7 +122,7 @@ function placedGains(model: StudyModel, random: SeededRandom, frequency: number)
   const n = loop.states;
   const multiply = (vector: Float64Array): Float64Array =>
     Float64Array.from(open.matrix, (row) => row.reduce((sum, entry, j) => sum + entry * vector[j], 0));
-  const columns = [Float64Array.from(loop.b, (row) => row[0])];
+  const columns: Float64Array[] = [Float64Array.from(loop.b, (row) => row[0])];
   while (columns.length < n) columns.push(multiply(columns[columns.length - 1]));
   // qᵀ = the last row of the inverse of [b, Ab, …]: solve the transpose against the last unit vector.
   const transposed = columns.map((column) => column.slice());
@@ -116,7 +131,7 @@ function placedGains(model: StudyModel, random: SeededRandom, frequency: number)
   let row = Float64Array.from(last, ([value]) => value);
   const left = (vector: Float64Array): Float64Array =>
     Float64Array.from(vector, (_, j) => vector.reduce((sum, entry, i) => sum + entry * open.matrix[i][j], 0));
-  for (let remaining = n; remaining > 0; ) {
+  for (let remaining = n; remaining > 0;) {
     const size = frequency * random.decade(-0.3, 0.5);
     const next = left(row);
     if (remaining === 1) {
@@ -153,5 +168,6 @@ export function addHardware(draft: StudyDraft, model: StudyModel, frequency: num
   if (random.chance(0.65)) model.actuators = [path('actuator')];
   const sensors = model.laws[0].law === 'state-feedback' ? 2 : 1;
   if (sensors === 1 && left > 0 && random.chance(0.3)) model.sensor = path('sensor');
-  if (left > 0 && random.chance(0.2)) model.sampling = { period: time('period'), padeOrder: Math.min(left, 2) };
+  if (left > 0 && random.chance(0.2))
+    model.sampling = { period: time('period'), padeOrder: Math.min(left, 2) };
 }

@@ -1,6 +1,18 @@
 import type { StudyDraft } from './study-draft';
 import type { MachineModel, SecondOrderModel } from './study-model';
-import { constant, divided, minus, negative, ONE, plus, scaled, squared, type Term, times, ZERO } from './term';
+import {
+  constant,
+  divided,
+  minus,
+  negative,
+  ONE,
+  plus,
+  scaled,
+  squared,
+  type Term,
+  times,
+  ZERO,
+} from './term';
 
 /** A machine made up at random, with what a controller's gains are measured by. */
 export interface RandomMachine {
@@ -142,7 +154,10 @@ export const balanced: MachineFamily = (draft) => {
       [ZERO, ZERO],
       [ZERO, negative(scaled(9.80665, moment))],
     ],
-    inputs: { u: [ONE, random.chance(0.5) ? ZERO : negative(constant(random.between(0.1, 0.5)))], w: [ZERO, ONE] },
+    inputs: {
+      u: [ONE, random.chance(0.5) ? ZERO : negative(constant(random.between(0.1, 0.5)))],
+      w: [ZERO, ONE],
+    },
     outputs: { y: { position: [ONE, ZERO] }, z: { position: [ZERO, ONE] } },
   };
   return { machine, frequency: 3.5, stiffness: size * 12, needsFeedback: true };
@@ -166,9 +181,14 @@ export const flutter: MachineFamily = (draft) => {
         damping[i][i] = draft.quantity(`c${i}`, size * frequency * random.decade(-2, -0.3));
         stiffness[i][i] = draft.quantity(`k${i}`, unit * random.decade(-0.3, 0.5));
       } else if (random.chance(0.7)) {
-        stiffness[i][j] = scaled(random.sign(), draft.quantity(`s${i}${j}`, unit * random.decade(-1.5, -0.3)));
-        if (random.chance(0.3)) stiffness[i][j] = times(stiffness[i][j], plus(ONE, scaled(0.5 / size, payload)));
-        if (random.chance(0.3)) damping[i][j] = constant(random.sign() * size * frequency * random.decade(-2.5, -1));
+        stiffness[i][j] = scaled(
+          random.sign(),
+          draft.quantity(`s${i}${j}`, unit * random.decade(-1.5, -0.3)),
+        );
+        if (random.chance(0.3))
+          stiffness[i][j] = times(stiffness[i][j], plus(ONE, scaled(0.5 / size, payload)));
+        if (random.chance(0.3))
+          damping[i][j] = constant(random.sign() * size * frequency * random.decade(-2.5, -1));
       }
     }
   }
@@ -215,7 +235,9 @@ export const general: MachineFamily = (draft) => {
     descriptor[loaded][loaded] = plus(constant(0.3), scaled(0.7, load));
     if (j !== loaded) descriptor[loaded][j] = scaled(random.between(-0.3, 0.3), load);
   }
-  const input = Array.from({ length: n }, () => (random.chance(0.5) ? constant(random.between(-1, 1)) : ZERO));
+  const input = Array.from({ length: n }, () =>
+    random.chance(0.5) ? constant(random.between(-1, 1)) : ZERO,
+  );
   input[random.integer(0, n - 1)] = random.chance(0.3) ? divided(ONE, plus(constant(0.5), load)) : ONE;
   return {
     machine: {
@@ -247,7 +269,9 @@ export const pocket: MachineFamily = (draft) => {
   const centre = nominal * (random.chance(0.75) ? random.between(1.1, 3) : random.between(0.2, 0.9));
   const across = distance(payload, centre, nominal * random.decade(-0.7, 0.3));
   const island = random.chance(0.6);
-  const bowl = island ? plus(across, distance(spring, stiff * random.between(0.85, 1.15), stiff * 0.3)) : across;
+  const bowl = island
+    ? plus(across, distance(spring, stiff * random.between(0.85, 1.15), stiff * 0.3))
+    : across;
   const radius = random.chance(0.1) ? 0 : random.chance(0.4) ? random.decade(-8, -3) : random.decade(-3, -1);
   const damper = scaled(2 * size * frequency * random.decade(-1.5, 0), minus(bowl, constant(radius)));
   const [mass, damping, stiffness] = [square(n), square(n), square(n)];

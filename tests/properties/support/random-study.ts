@@ -36,7 +36,12 @@ export function randomStudy(seed: number): StudyModel {
   throw new Error(`no study was found for seed ${seed}`);
 }
 
-function draw(random: SeededRandom, seed: number, most: number, unstableAllowed: boolean): StudyModel | undefined {
+function draw(
+  random: SeededRandom,
+  seed: number,
+  most: number,
+  unstableAllowed: boolean,
+): StudyModel | undefined {
   const draft = new StudyDraft(random);
   const made = random.pick(FAMILIES)(draft);
   const model: StudyModel = {
@@ -59,7 +64,8 @@ function draw(random: SeededRandom, seed: number, most: number, unstableAllowed:
   addSearches(draft, model);
   const loop = directLoop(model, siValues(model, nominalValues(model)));
   const point = directPoint(model, nominalValues(model));
-  if (loop === undefined || point === undefined || loop.states < ORDERS.least || loop.states > most) return undefined;
+  if (loop === undefined || point === undefined || loop.states < ORDERS.least || loop.states > most)
+    return undefined;
   if (!unstableAllowed && !(point.decayRate > 1e-6 * point.scale)) return undefined;
   model.requirements = randomRequirements(random, point);
   return model.requirements.length > 0 ? model : undefined;
@@ -69,7 +75,13 @@ function draw(random: SeededRandom, seed: number, most: number, unstableAllowed:
 function addUnits({ random, parameters, payload }: StudyDraft): void {
   parameters.forEach((parameter, index) => {
     if (!random.chance(0.12)) return;
-    const [unit, siFactor] = index === payload ? ['t', 1000] : random.pick<[string, number]>([['kN/m', 1000], ['ms', 0.001]]);
+    const [unit, siFactor] =
+      index === payload
+        ? ['t', 1000]
+        : random.pick<[string, number]>([
+            ['kN/m', 1000],
+            ['ms', 0.001],
+          ]);
     parameter.unit = unit;
     parameter.siFactor = siFactor;
     for (const key of ['nominal', 'low', 'high', 'minimum', 'maximum'] as const) {
@@ -83,7 +95,8 @@ function addSearches({ random, parameters, payload }: StudyDraft, model: StudyMo
   if (payload === undefined) return;
   const { nominal, high, low, minimum } = parameters[payload];
   if (random.chance(0.5)) model.searchUpTo = Math.max(high, nominal * random.decade(0.05, 1.5));
-  if (random.chance(0.3)) model.searchDownTo = Math.max(minimum ?? 0, Math.min(low, nominal * random.decade(-2, -0.1)));
+  if (random.chance(0.3))
+    model.searchDownTo = Math.max(minimum ?? 0, Math.min(low, nominal * random.decade(-2, -0.1)));
 }
 
 function randomRequirements(random: SeededRandom, point: DirectPoint): ModelRequirement[] {
@@ -91,7 +104,10 @@ function randomRequirements(random: SeededRandom, point: DirectPoint): ModelRequ
   const margins = point.margins(0);
   const of = {
     stability: (): ModelRequirement => ({ measure: 'stability' }),
-    decayRate: (): ModelRequirement => ({ measure: 'decayRate', atLeast: share * Math.max(point.decayRate, 0) }),
+    decayRate: (): ModelRequirement => ({
+      measure: 'decayRate',
+      atLeast: share * Math.max(point.decayRate, 0),
+    }),
     dampingRatio: (): ModelRequirement => ({
       measure: 'dampingRatio',
       atLeast: Math.min(0.95, share * Math.max(0, point.dampingRatio)),
@@ -100,15 +116,16 @@ function randomRequirements(random: SeededRandom, point: DirectPoint): ModelRequ
       const factor = margins ? Math.min(margins.gainUp, 1 / margins.gainDown, 6) : 2;
       return { measure: 'gainMargin', atLeast: 1 + share * (factor - 1) };
     },
-    phaseMargin: (): ModelRequirement => ({ measure: 'phaseMargin', atLeast: share * Math.min(3, margins?.phase ?? 0.5) }),
+    phaseMargin: (): ModelRequirement => ({
+      measure: 'phaseMargin',
+      atLeast: share * Math.min(3, margins?.phase ?? 0.5),
+    }),
     modulusMargin: (): ModelRequirement => ({
       measure: 'modulusMargin',
       atLeast: share * Math.min(1, margins?.modulus ?? 0.5),
     }),
   };
   const measures = Object.keys(of) as (keyof typeof of)[];
-  const chosen = random.chance(0.6)
-    ? [random.pick(measures)]
-    : measures.filter(() => random.chance(0.4));
+  const chosen = random.chance(0.6) ? [random.pick(measures)] : measures.filter(() => random.chance(0.4));
   return chosen.map((measure) => of[measure]());
 }

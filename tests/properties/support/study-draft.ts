@@ -53,7 +53,8 @@ export class StudyDraft {
     parameter.low = side === 0 ? nominal : nominal - width();
     parameter.high = side === 1 ? nominal : nominal + width();
     if (random.chance(payload ? 0.6 : 0.5)) {
-      parameter.minimum = parameter.low - random.next() * (payload ? parameter.low : 0.9 * Math.abs(parameter.low));
+      parameter.minimum =
+        parameter.low - random.next() * (payload ? parameter.low : 0.9 * Math.abs(parameter.low));
     }
     if (random.chance(0.25)) parameter.maximum = parameter.high + random.decade(-1, 1) * size;
     if (random.chance(0.2)) parameter.kind = random.pick(['use', 'wear', 'tolerance']);

@@ -92,11 +92,15 @@ export function studyJson(model: StudyModel): object {
     ...(model.searchDownTo !== undefined && { searchDownTo: model.searchDownTo }),
     ...(laws.length > 0 && { control: laws.length === 1 ? lawJson(laws[0]) : laws.map(lawJson) }),
     ...(actuators.some((actuator) => actuator !== undefined) && {
-      actuator: laws.length === 1 ? hardwareJson(actuators[0] ?? {}) : actuators.map((a) => hardwareJson(a ?? {})),
+      actuator:
+        laws.length === 1 ? hardwareJson(actuators[0] ?? {}) : actuators.map((a) => hardwareJson(a ?? {})),
     }),
     ...(sensor && { sensor: hardwareJson(sensor) }),
     ...(sampling && {
-      sampling: { period: text(sampling.period), ...(sampling.padeOrder && { padeOrder: sampling.padeOrder }) },
+      sampling: {
+        period: text(sampling.period),
+        ...(sampling.padeOrder && { padeOrder: sampling.padeOrder }),
+      },
     }),
     requirements: model.requirements,
   };

@@ -54,8 +54,7 @@ export interface HardwareModel {
 
 /** A requirement with its level as a number. */
 export type ModelRequirement =
-  | { measure: 'stability' }
-  | { measure: LevelMeasure; atLeast: number; input?: string };
+  { measure: 'stability' } | { measure: LevelMeasure; atLeast: number; input?: string };
 
 /** Everything that a study says, with entries in both forms. */
 export interface StudyModel {

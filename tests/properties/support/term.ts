@@ -15,12 +15,7 @@ export const parameterTerm = (id: string, index: number): Term => ({
   at: (point) => point[index],
 });
 
-const combined = (
-  operator: string,
-  a: Term,
-  b: Term,
-  value: (x: number, y: number) => number,
-): Term => ({
+const combined = (operator: string, a: Term, b: Term, value: (x: number, y: number) => number): Term => ({
   text: `(${a.text} ${operator} ${b.text})`,
   at: (point) => value(a.at(point), b.at(point)),
 });
@@ -30,12 +25,14 @@ export function plus(a: Term, b: Term): Term {
   return b === ZERO ? a : combined('+', a, b, (x, y) => x + y);
 }
 
-export const minus = (a: Term, b: Term): Term =>
-  b === ZERO ? a : combined('-', a, b, (x, y) => x - y);
+export const minus = (a: Term, b: Term): Term => (b === ZERO ? a : combined('-', a, b, (x, y) => x - y));
 export const divided = (a: Term, b: Term): Term => combined('/', a, b, (x, y) => x / y);
 export const negative = (a: Term): Term =>
   a === ZERO ? ZERO : { text: `(-${a.text})`, at: (point) => -a.at(point) };
-export const squared = (a: Term): Term => ({ text: `(${a.text})^2`, at: (point) => a.at(point) * a.at(point) });
+export const squared = (a: Term): Term => ({
+  text: `(${a.text})^2`,
+  at: (point) => a.at(point) * a.at(point),
+});
 
 export function times(a: Term, b: Term): Term {
   if (a === ZERO || b === ZERO) return ZERO;

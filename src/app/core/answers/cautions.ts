@@ -12,6 +12,9 @@ import { ChangeDetectionStrategy, Component, computed, input } from '@angular/co
     </ul>
   `,
   styles: `
+    :host {
+      display: block;
+    }
     ul {
       display: grid;
       gap: 0.375rem;

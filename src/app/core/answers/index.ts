@@ -11,4 +11,11 @@ export {
 } from './figure';
 export { mayDesign, ROLE_WORDS } from './may';
 export { provedText, rangesInWords, rangesOfRun, reserveOf } from './run-ranges';
-export { measureWords, proofWords, RUN_STATE_WORDS, verdictOf, verdictWords, type VerdictFacts } from './words';
+export {
+  measureWords,
+  proofWords,
+  RUN_STATE_WORDS,
+  verdictOf,
+  verdictWords,
+  type VerdictFacts,
+} from './words';

@@ -6,8 +6,7 @@ import { failsAbove, failsBelow, provedFrom, provedTo, withUnit } from './figure
 export function rangesOfRun(run: RunSummary | null): PayloadRanges | undefined {
   if (run === null || run.verdict === null) return undefined;
   const { ratedLow, ratedHigh, provedLow, provedHigh, failsAt } = run;
-  const proved =
-    provedLow === null || provedHigh === null ? undefined : { low: provedLow, high: provedHigh };
+  const proved = provedLow === null || provedHigh === null ? undefined : { low: provedLow, high: provedHigh };
   const failsLow = failsAt !== null && proved !== undefined && failsAt < proved.low;
   return {
     rated: ratedLow === null || ratedHigh === null ? undefined : { low: ratedLow, high: ratedHigh },

@@ -12,7 +12,9 @@ const MEASURE_WORDS: Record<Measure, string> = {
 };
 
 export function measureWords(measure: string): string {
-  return Object.hasOwn(MEASURE_WORDS, measure) ? MEASURE_WORDS[measure as keyof typeof MEASURE_WORDS] : measure;
+  return Object.hasOwn(MEASURE_WORDS, measure)
+    ? MEASURE_WORDS[measure as keyof typeof MEASURE_WORDS]
+    : measure;
 }
 
 export const RUN_STATE_WORDS: Record<RunState, string> = {

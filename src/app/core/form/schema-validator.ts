@@ -9,6 +9,8 @@ interface JudgingSchema {
 export function validBy(schema: JudgingSchema): ValidatorFn {
   return ({ value }) => {
     const read = schema.safeParse(value);
-    return read.success ? null : { fault: read.error.issues[0]?.message ?? 'is not usable' };
+    if (read.success) return null;
+    const empty = typeof value === 'string' && value.trim() === '';
+    return { fault: empty ? 'is missing' : (read.error.issues[0]?.message ?? 'is not usable') };
   };
 }

@@ -22,7 +22,8 @@ export class Page {
 
   open(head: PageHead): void {
     this.title.setTitle(head.title === '' ? 'Tareline' : `${head.title} · Tareline`);
-    this.steps.set(head.trail);
+    // A step whose name is still on its way is left out.
+    this.steps.set(head.trail.filter(({ label }) => label !== ''));
   }
 }
 

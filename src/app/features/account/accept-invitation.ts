@@ -25,8 +25,8 @@ import { Entrance } from './entrance';
     <app-entrance title="Accept the invitation">
       <ng-container *appWhenLoaded="invitation; let invitation">
         <p>
-          {{ invitation.organisation }} invites <strong>{{ invitation.email }}</strong
-          >. Choose a password, and you are in.
+          {{ invitation.organisation }} invites <strong>{{ invitation.email }}</strong>. Choose a password,
+          and you are in.
         </p>
         <form class="form" [formGroup]="form" (ngSubmit)="accept()" novalidate>
           @if (submission.fault(); as fault) {
@@ -41,7 +41,9 @@ import { Entrance } from './entrance';
             [control]="form.controls.password"
           />
           <div class="acts">
-            <button class="button main" [attr.aria-disabled]="submission.sending()">Accept and sign in</button>
+            <button type="submit" class="button main" [attr.aria-disabled]="submission.sending()">
+              Accept and sign in
+            </button>
           </div>
         </form>
       </ng-container>

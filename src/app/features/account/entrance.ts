@@ -17,7 +17,10 @@ import { ChangeDetectionStrategy, Component, input } from '@angular/core';
             <line x1="0.5" y1="0" x2="0.5" y2="7" />
           </pattern>
         </defs>
-        <path class="scale" d="M30 1v298M30 2H14M30 51H20M30 101H14M30 150H20M30 199H14M30 249H20M30 298H14" />
+        <path
+          class="scale"
+          d="M30 1v298M30 2H14M30 51H20M30 101H14M30 150H20M30 199H14M30 249H20M30 298H14"
+        />
         <rect class="beyond" x="40" y="2" width="30" height="88" fill="url(#entrance-hatch)" />
         <rect class="carried" x="40" y="90" width="30" height="208" />
         <path class="mark" d="M4 90h88" />

@@ -17,7 +17,11 @@ import { browserName } from './browser-name';
       <h2 id="sessions-title">Where you are signed in</h2>
       <button type="button" class="button" (click)="signOutEverywhere()">Sign out everywhere</button>
     </div>
-    <div class="sheet" *appWhenLoaded="sessions; let sessions; let renewing = renewing" [class.renewing]="renewing">
+    <div
+      class="sheet"
+      *appWhenLoaded="sessions; let sessions; let renewing = renewing"
+      [class.renewing]="renewing"
+    >
       <table class="table padded stacks">
         <thead>
           <tr>
@@ -70,7 +74,10 @@ export class OpenSessions {
   }
 
   protected async end(session: OpenSession): Promise<void> {
-    await this.notices.during(() => this.api.act('DELETE', `/api/session/all/${session.id}`), 'Signed out there.');
+    await this.notices.during(
+      () => this.api.act('DELETE', `/api/session/all/${session.id}`),
+      'Signed out there.',
+    );
     this.sessions.reload();
   }
 

@@ -28,7 +28,9 @@ import { TextField } from '../../ui/form';
         [control]="form.controls.next"
       />
       <div class="acts">
-        <button class="button" [attr.aria-disabled]="submission.sending()">Change password</button>
+        <button type="submit" class="button" [attr.aria-disabled]="submission.sending()">
+          Change password
+        </button>
       </div>
     </form>
   `,

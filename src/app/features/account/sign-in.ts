@@ -34,7 +34,9 @@ import { Entrance } from './entrance';
           [control]="form.controls.password"
         />
         <div class="acts">
-          <button class="button main" [attr.aria-disabled]="submission.sending()">Sign in</button>
+          <button type="submit" class="button main" [attr.aria-disabled]="submission.sending()">
+            Sign in
+          </button>
         </div>
       </form>
       <p class="note">No account yet? An administrator of your organisation can invite you.</p>
@@ -64,7 +66,6 @@ export class SignInPage {
         await this.session.signIn(signInSchema.parse(this.form.getRawValue()));
       } catch (error) {
         if (!(error instanceof Refusal) || error.status !== 401) throw error;
-        this.form.controls.password.reset();
         this.submission.say('E-mail address or password is wrong.');
         return;
       }

@@ -31,7 +31,7 @@ import { Empty, WhenLoaded } from '../../ui/states';
             @for (entry of entries(); track entry.id) {
               <tr>
                 <td data-label="When"><app-moment [at]="entry.at" /></td>
-                <td data-label="Who">{{ entry.who ?? 'Nobody signed in' }}</td>
+                <td data-label="Who">{{ entry.who ?? 'Not signed in' }}</td>
                 <td data-label="What" class="strong-text">{{ entry.action }}</td>
                 <td data-label="On">{{ entry.subject }}</td>
                 <td class="second details" [attr.data-label]="entry.details ? 'Details' : null">

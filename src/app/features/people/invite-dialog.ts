@@ -28,7 +28,9 @@ import { ChoiceField, TextField, type Choice } from '../../ui/form';
           <input type="checkbox" formControlName="mayCreateProducts" />
           May create products
         </label>
-        <button dialogActs class="button main" [attr.aria-disabled]="submission.sending()">Send invitation</button>
+        <button dialogActs type="submit" class="button main" [attr.aria-disabled]="submission.sending()">
+          Send invitation
+        </button>
       </app-dialog-frame>
     </form>
   `,

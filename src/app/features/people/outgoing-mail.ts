@@ -48,6 +48,17 @@ const STATE_WORDS: Record<OutgoingMail['state'], string> = {
     summary:hover {
       background: var(--rule-light);
     }
+    .subject::before {
+      content: '';
+      display: inline-block;
+      margin-right: 0.625rem;
+      border: 4px solid transparent;
+      border-left: 6px solid var(--ink-second);
+      border-right: 0;
+    }
+    [open] .subject::before {
+      transform: rotate(90deg);
+    }
     .subject {
       font-weight: 600;
     }

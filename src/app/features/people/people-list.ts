@@ -84,7 +84,9 @@ export class PeopleList {
   }
 
   protected async setDisabled(person: Person, disabled: boolean): Promise<void> {
-    const done = disabled ? `${person.name} is signed out and cannot sign in.` : `${person.name} may sign in again.`;
+    const done = disabled
+      ? `${person.name} is signed out and cannot sign in.`
+      : `${person.name} may sign in again.`;
     await this.change(person, { disabled }, done);
   }
 

@@ -20,7 +20,9 @@ import { ROLE_WORDS } from '../../core/answers';
             <option [value]="role">{{ words[role] }}</option>
           }
         </select>
-        <button class="button" [attr.aria-disabled]="form.controls.personId.value === ''">Add to the product</button>
+        <button type="submit" class="button" [attr.aria-disabled]="form.controls.personId.value === ''">
+          Add to the product
+        </button>
       </form>
     }
   `,

@@ -114,7 +114,10 @@ export class MembersPanel {
 
   protected async remove(member: Member): Promise<void> {
     const path = `${this.path()}/${member.personId}`;
-    await this.notices.during(() => this.api.act('DELETE', path), `${member.name} has no role here any more.`);
+    await this.notices.during(
+      () => this.api.act('DELETE', path),
+      `${member.name} has no role here any more.`,
+    );
     this.members.reload();
   }
 

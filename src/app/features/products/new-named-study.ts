@@ -38,7 +38,9 @@ const FROM_FILE = 'file';
         @if (form.controls.start.value === fromFile) {
           <app-study-choice [(study)]="study" />
         }
-        <button dialogActs class="button main" [attr.aria-disabled]="submission.sending()">{{ data.act }}</button>
+        <button dialogActs type="submit" class="button main" [attr.aria-disabled]="submission.sending()">
+          {{ data.act }}
+        </button>
       </app-dialog-frame>
     </form>
   `,

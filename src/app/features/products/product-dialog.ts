@@ -24,7 +24,7 @@ import { TextField } from '../../ui/form';
           [lines]="3"
           [control]="form.controls.description"
         />
-        <button dialogActs class="button main" [attr.aria-disabled]="submission.sending()">
+        <button dialogActs type="submit" class="button main" [attr.aria-disabled]="submission.sending()">
           {{ product ? 'Save' : 'Create product' }}
         </button>
       </app-dialog-frame>

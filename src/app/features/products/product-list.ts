@@ -22,7 +22,11 @@ import { ProductDialog } from './product-dialog';
           <button type="button" class="button main" (click)="create()">New product</button>
         }
       </div>
-      <div class="sheet" *appWhenLoaded="products; let products; let renewing = renewing" [class.renewing]="renewing">
+      <div
+        class="sheet"
+        *appWhenLoaded="products; let products; let renewing = renewing"
+        [class.renewing]="renewing"
+      >
         @if (products.length === 0) {
           @if (session.mayCreateProducts()) {
             <app-empty title="No product yet">

@@ -56,7 +56,11 @@ export class ProductPage {
     this.route.queryParamMap.pipe(map((query) => readSortOrder(query.get('sort'), FIRST_ORDER))),
     { requireSync: true },
   );
-  protected readonly product = loaded(() => `/api/products/${this.productId()}`, productSchema, 'this product');
+  protected readonly product = loaded(
+    () => `/api/products/${this.productId()}`,
+    productSchema,
+    'this product',
+  );
   protected readonly variants = loaded(
     () => `/api/products/${this.productId()}/variants`,
     listOf(variantSchema),
@@ -64,7 +68,8 @@ export class ProductPage {
   );
   protected readonly mayDesign = computed(() => mayDesign(this.product.value()?.role));
   protected readonly approximated = computed(
-    () => this.variants.value()?.some(({ scenarios }) => scenarios.some(({ run }) => run?.approximated)) === true,
+    () =>
+      this.variants.value()?.some(({ scenarios }) => scenarios.some(({ run }) => run?.approximated)) === true,
   );
 
   constructor() {
@@ -86,6 +91,7 @@ export class ProductPage {
   }
 
   protected count(variants: readonly Variant[]): string {
+    if (variants.length === 0) return '';
     return `${variants.length} ${variants.length === 1 ? 'variant' : 'variants'}, rated range against proved range`;
   }
 
@@ -138,6 +144,8 @@ export class ProductPage {
   }
 
   private shows(scenarioId: string): boolean {
-    return this.variants.value()?.some(({ scenarios }) => scenarios.some(({ id }) => id === scenarioId)) === true;
+    return (
+      this.variants.value()?.some(({ scenarios }) => scenarios.some(({ id }) => id === scenarioId)) === true
+    );
   }
 }

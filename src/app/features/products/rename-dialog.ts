@@ -24,7 +24,9 @@ export interface RenameData {
           <p class="form-fault" role="alert">{{ fault }}</p>
         }
         <app-text-field label="Name" [control]="form.controls.name" />
-        <button dialogActs class="button main" [attr.aria-disabled]="submission.sending()">{{ data.act }}</button>
+        <button dialogActs type="submit" class="button main" [attr.aria-disabled]="submission.sending()">
+          {{ data.act }}
+        </button>
       </app-dialog-frame>
     </form>
   `,

@@ -26,6 +26,7 @@ export type ListedScenario = Variant['scenarios'][number];
   styles: `
     .verdict {
       display: inline-flex;
+      align-items: center;
       gap: 0.4375rem;
     }
     .figure {

@@ -37,7 +37,11 @@ export class VariantPage {
     inject(ActivatedRoute).paramMap.pipe(map((params) => params.get('variantId') ?? '')),
     { requireSync: true },
   );
-  protected readonly variant = loaded(() => `/api/variants/${this.variantId()}`, variantSchema, 'this variant');
+  protected readonly variant = loaded(
+    () => `/api/variants/${this.variantId()}`,
+    variantSchema,
+    'this variant',
+  );
   private readonly product = loaded(
     () => this.variant.value() && `/api/products/${this.variant.value()?.productId}`,
     productSchema,

@@ -1,5 +1,6 @@
 import { ChangeDetectionStrategy, Component, inject } from '@angular/core';
-import { MAT_DIALOG_DATA, MatDialog, MatDialogModule } from '@angular/material/dialog';
+import type { MatDialog } from '@angular/material/dialog';
+import { MAT_DIALOG_DATA, MatDialogModule } from '@angular/material/dialog';
 import { firstValueFrom } from 'rxjs';
 import { DialogFrame } from './dialog-frame';
 
@@ -16,7 +17,9 @@ export interface Question {
   template: `
     <app-dialog-frame [title]="question.title">
       <p>{{ question.text }}</p>
-      <button dialogActs type="button" class="button main" [mat-dialog-close]="true">{{ question.act }}</button>
+      <button dialogActs type="button" class="button main" [mat-dialog-close]="true">
+        {{ question.act }}
+      </button>
     </app-dialog-frame>
   `,
   changeDetection: ChangeDetectionStrategy.OnPush,

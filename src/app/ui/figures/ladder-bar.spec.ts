@@ -10,7 +10,11 @@ async function picture(ranges: PayloadRanges): Promise<HTMLElement> {
 
 describe('LadderBar', () => {
   it('fills the proved range and marks its end', async () => {
-    const svg = await picture({ rated: { low: 40, high: 480 }, proved: { low: 0, high: 570 }, failsAbove: 571 });
+    const svg = await picture({
+      rated: { low: 40, high: 480 },
+      proved: { low: 0, high: 570 },
+      failsAbove: 571,
+    });
     expect(svg.querySelector('.proved')?.getAttribute('width')).toBe('57%');
     expect(svg.querySelector('.held')?.getAttribute('x')).toBe('4%');
     expect([...svg.querySelectorAll('.mark')].map((mark) => mark.getAttribute('x1'))).toEqual(['57%']);

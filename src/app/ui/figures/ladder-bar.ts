@@ -11,11 +11,23 @@ import { nextPictureId } from './picture-id';
   template: `
     <svg width="100%" height="46" role="img" [attr.aria-label]="label()">
       <defs>
-        <pattern [attr.id]="id + '-fails'" width="6" height="6" patternUnits="userSpaceOnUse" patternTransform="rotate(45)">
+        <pattern
+          [attr.id]="id + '-fails'"
+          width="6"
+          height="6"
+          patternUnits="userSpaceOnUse"
+          patternTransform="rotate(45)"
+        >
           <rect class="fails-ground" width="6" height="6" />
           <line class="fails-line" x1="0.5" y1="0" x2="0.5" y2="6" />
         </pattern>
-        <pattern [attr.id]="id + '-open'" width="6" height="6" patternUnits="userSpaceOnUse" patternTransform="rotate(45)">
+        <pattern
+          [attr.id]="id + '-open'"
+          width="6"
+          height="6"
+          patternUnits="userSpaceOnUse"
+          patternTransform="rotate(45)"
+        >
           <rect class="open-ground" width="6" height="6" />
           <line class="open-line" x1="0.5" y1="0" x2="0.5" y2="6" />
         </pattern>
@@ -120,7 +132,7 @@ export class LadderBar {
   );
 
   protected percent(share: number): string {
-    return `${share * 100}%`;
+    return `${Number((share * 100).toFixed(3))}%`;
   }
 
   protected width(part: Stretch): string {

@@ -12,7 +12,7 @@ import type { Scale } from '../scale/ticks';
       @for (tick of scale().ticks; track tick; let first = $first; let last = $last) {
         <line y1="22" y2="30" [attr.x1]="at(tick)" [attr.x2]="at(tick)" />
         <text y="15" [attr.x]="at(tick)" [attr.text-anchor]="first ? 'start' : last ? 'end' : 'middle'">
-          {{ tick }}{{ last ? '\u2009' + unit() : '' }}
+          {{ figure(tick, last) }}
         </text>
       }
     </svg>
@@ -42,6 +42,10 @@ export class LadderScale {
       .ticks.slice(0, -1)
       .map((tick) => tick + this.scale().step / 2),
   );
+
+  protected figure(value: number, last: boolean): string {
+    return last ? `${value}\u2009${this.unit()}` : String(value);
+  }
 
   protected at(value: number): string {
     return `${(value / this.scale().end) * 100}%`;

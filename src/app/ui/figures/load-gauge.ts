@@ -18,11 +18,23 @@ const TOP = 10;
   template: `
     <svg width="132" height="356" viewBox="0 0 132 356" role="img" [attr.aria-label]="label()">
       <defs>
-        <pattern [attr.id]="id + '-fails'" width="7" height="7" patternUnits="userSpaceOnUse" patternTransform="rotate(45)">
+        <pattern
+          [attr.id]="id + '-fails'"
+          width="7"
+          height="7"
+          patternUnits="userSpaceOnUse"
+          patternTransform="rotate(45)"
+        >
           <rect class="fails-ground" width="7" height="7" />
           <line class="fails-line" x1="0.5" y1="0" x2="0.5" y2="7" />
         </pattern>
-        <pattern [attr.id]="id + '-open'" width="7" height="7" patternUnits="userSpaceOnUse" patternTransform="rotate(45)">
+        <pattern
+          [attr.id]="id + '-open'"
+          width="7"
+          height="7"
+          patternUnits="userSpaceOnUse"
+          patternTransform="rotate(45)"
+        >
           <rect class="open-ground" width="7" height="7" />
           <line class="open-line" x1="0.5" y1="0" x2="0.5" y2="7" />
         </pattern>
@@ -42,7 +54,13 @@ const TOP = 10;
         />
       }
       @if (layout.proved; as part) {
-        <rect class="proved" x="50" width="22" [attr.y]="y(part.to)" [attr.height]="y(part.from) - y(part.to)" />
+        <rect
+          class="proved"
+          x="50"
+          width="22"
+          [attr.y]="y(part.to)"
+          [attr.height]="y(part.from) - y(part.to)"
+        />
       }
       @if (layout.ratedAndProved; as part) {
         <rect
@@ -65,7 +83,14 @@ const TOP = 10;
         </text>
       }
       @for (mark of layout.marks; track mark) {
-        <line class="mark" [class.sampled]="ranges().sampled" x1="38" x2="104" [attr.y1]="y(mark)" [attr.y2]="y(mark)" />
+        <line
+          class="mark"
+          [class.sampled]="ranges().sampled"
+          x1="38"
+          x2="104"
+          [attr.y1]="y(mark)"
+          [attr.y2]="y(mark)"
+        />
       }
       @for (test of shownTests(); track test.label) {
         <path class="test" [attr.d]="'M75 ' + y(test.share) + 'l9 -5v10z'" />
@@ -161,6 +186,6 @@ export class LoadGauge {
     const { rated, proved, failsAbove } = this.ranges();
     const high = Math.max(proved?.high ?? 0, failsAbove ?? 0);
     const needed = Math.max(rated?.high ?? 0, ...this.tests().map((test) => test.at));
-    return Math.max(needed * 1.1, needed > 0 ? Math.min(high * 1.15, needed * 2.5) : high * 1.15);
+    return Math.max(needed * 1.1, needed > 0 ? Math.min(high * 1.15, needed * 3.2) : high * 1.15);
   }
 }

@@ -32,7 +32,8 @@ export function layOutRanges(ranges: PayloadRanges, end: number): RangeLayout {
   const stretch = (low: number, high: number): Stretch | undefined =>
     share(high) > share(low) ? { from: share(low), to: share(high) } : undefined;
 
-  const beyond = (part: Stretch | undefined, fails: boolean) => (part === undefined ? undefined : { ...part, fails });
+  const beyond = (part: Stretch | undefined, fails: boolean) =>
+    part === undefined ? undefined : { ...part, fails };
   const below = proved === undefined ? undefined : beyond(stretch(0, proved.low), failsBelow !== undefined);
   const above =
     proved === undefined

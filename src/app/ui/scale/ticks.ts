@@ -13,10 +13,11 @@ const ROUND_STEPS = [1, 2, 2.5, 5, 10];
  * of 0 to 1.
  */
 export function scaleFromZero(most: number, count: number): Scale {
-  const wanted = (most > 0 && Number.isFinite(most) ? most : 1) / count;
+  const covered = most > 0 && Number.isFinite(most) ? most : 1;
+  const wanted = covered / count;
   const power = 10 ** Math.floor(Math.log10(wanted));
   const step = (ROUND_STEPS.find((candidate) => candidate * power >= wanted * (1 - 1e-9)) ?? 10) * power;
-  const steps = Math.max(1, Math.ceil(most / step - 1e-9)) || 1;
+  const steps = Math.max(1, Math.ceil(covered / step - 1e-9));
   const ticks = Array.from({ length: steps + 1 }, (_, index) => Number((index * step).toPrecision(12)));
   return { end: ticks[steps], step, ticks };
 }

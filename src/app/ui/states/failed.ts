@@ -14,7 +14,11 @@ import type { Failure } from './load-state';
       }
     </svg>
     <div role="alert">
-      <h2>{{ failure().title }}</h2>
+      @if (page()) {
+        <h1>{{ failure().title }}</h1>
+      } @else {
+        <h2>{{ failure().title }}</h2>
+      }
       <p class="note">{{ failure().detail }}</p>
       @if (failure().requestId; as requestId) {
         <p class="second">Request {{ requestId }}</p>
@@ -29,6 +33,9 @@ import type { Failure } from './load-state';
       display: flex;
       gap: 1.5rem;
       padding: 2rem 1.25rem;
+    }
+    h1 {
+      font-size: 1.625rem;
     }
     svg {
       flex: none;
@@ -50,10 +57,13 @@ import type { Failure } from './load-state';
       margin-bottom: 0.875rem;
     }
   `,
+  host: { '[class.page]': 'page()', '[class.page-narrow]': 'page()' },
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class Failed {
   readonly failure = input.required<Failure>();
+  /** It stands for the whole page, whose heading it then is. */
+  readonly page = input(false);
   readonly again = output();
 
   protected readonly mayTryAgain = computed(() => ['unreachable', 'broken'].includes(this.failure().kind));

@@ -28,6 +28,8 @@ export interface WhenLoadedContext<T> {
 @Directive({ selector: '[appWhenLoaded]' })
 export class WhenLoaded<T> {
   readonly appWhenLoaded = input.required<Loaded<T>>();
+  /** It is the page itself: where it fails, the failure is the page's heading. */
+  readonly appWhenLoadedIsPage = input(false);
 
   private readonly template = inject<TemplateRef<WhenLoadedContext<T>>>(TemplateRef);
   private readonly container = inject(ViewContainerRef);
@@ -85,6 +87,7 @@ export class WhenLoaded<T> {
     this.container.createComponent(Failed, {
       bindings: [
         inputBinding('failure', () => this.failure() ?? failure),
+        inputBinding('page', this.appWhenLoadedIsPage),
         outputBinding('again', () => this.appWhenLoaded().reload()),
       ],
     });

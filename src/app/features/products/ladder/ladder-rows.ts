@@ -85,8 +85,13 @@ function sortValue(row: LadderRow, column: string): string | number | undefined 
 function mostShown(rows: readonly LadderRow[]): number {
   const shown = rows.flatMap(({ ranges }) => (ranges === undefined ? [] : [ranges]));
   const rated = Math.max(0, ...shown.map((ranges) => ranges.rated?.high ?? 0));
-  const proved = Math.max(0, ...shown.map((ranges) => Math.max(ranges.proved?.high ?? 0, ranges.failsAbove ?? 0)));
-  return rated > 0 ? Math.max(rated * 1.1, Math.min(proved * 1.08, rated * MOST_RATINGS_SHOWN)) : proved * 1.1;
+  const proved = Math.max(
+    0,
+    ...shown.map((ranges) => Math.max(ranges.proved?.high ?? 0, ranges.failsAbove ?? 0)),
+  );
+  return rated > 0
+    ? Math.max(rated * 1.1, Math.min(proved * 1.08, rated * MOST_RATINGS_SHOWN))
+    : proved * 1.1;
 }
 
 /** Undefined where the units do not convert into each other: such bars cannot hang from one scale. */

@@ -57,10 +57,10 @@ describe('answersOf', () => {
     expect(answers.sentence).toBe('Proved to 571.2\u2009kg; fails at 572.4\u2009kg.');
     expect(answers.figures).toContainEqual({ label: 'Reserve', text: '+91.2\u2009kg' });
     expect(answers.figures).toContainEqual({
-      label: 'Plate, with the static test × 1.25',
+      label: 'Plate, with the static test ×\u00a01.25',
       text: '450\u2009kg',
     });
-    expect(answers.facts).toContainEqual({ label: 'Bands may grow together', text: '× 1.38' });
+    expect(answers.facts).toContainEqual({ label: 'Bands may grow together', text: '×\u00a01.38' });
     expect(answers.facts).toContainEqual({
       label: 'Critical frequency',
       text: '2.53\u2009Hz, 15.9\u2009rad/s',
@@ -85,7 +85,9 @@ describe('answersOf', () => {
 
   it('says where the search ended and what stays open', () => {
     const open = { provedTo: 2400, failsAt: null, searchedUpTo: 2400, proof: 'proved' as const };
-    expect(change({ largestPayload: open })).toContain('nothing fails up to 2400\u2009kg');
+    expect(change({ largestPayload: open })).toBe(
+      'Proved to 2400\u2009kg; the search ends there, and nothing heavier is known to fail.',
+    );
     expect(change({ largestPayload: { ...open, provedTo: 600, undecided: true } })).toContain(
       'beyond it neither proved nor refuted',
     );
@@ -97,7 +99,7 @@ describe('answersOf', () => {
   it('tells the light end where it fails', () => {
     const smallest = { provedTo: 52.38461, failsAt: 52.30461, searchedDownTo: 0, proof: 'proved' as const };
     const answers = answersOf({ ...result, smallestPayload: smallest }, study, rated);
-    expect(answers.sentence).toBe('Proved from 52.39 to 571.2\u2009kg; fails at 572.4\u2009kg.');
+    expect(answers.sentence).toBe('Proved from 52.39 to 571.2\u2009kg; fails at 52.3 and at 572.4\u2009kg.');
     expect(answers.ranges).toMatchObject({ failsBelow: 52.30461, failsAbove: 572.31 });
     expect(answers.figures).toContainEqual({ label: 'Reserve', text: '\u221212.4\u2009kg' });
   });

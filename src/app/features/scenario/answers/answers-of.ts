@@ -98,10 +98,15 @@ function sentenceOf(result: Result, unit: string | undefined, approximated: bool
   const from = fromLow ? `from ${provedFrom(smallest.provedTo ?? 0)} ` : '';
   const delay = approximated && largest.proof === 'proved' ? ' for the approximated delay' : '';
   const start = `${word}${delay} ${from}to ${withUnit(provedTo(largest.provedTo), unit)}`;
-  if (largest.failsAt !== null) return `${start}; fails at ${withUnit(failsAbove(largest.failsAt), unit)}.`;
-  if (largest.undecided) return `${start}; beyond it neither proved nor refuted.`;
-  const searched = withUnit(plainFigure(largest.searchedUpTo), unit);
-  return `${start}; nothing fails up to ${searched}, where the search ends.`;
+  const below = smallest === null || smallest.failsAt === null ? [] : [failsBelow(smallest.failsAt)];
+  if (largest.failsAt !== null) {
+    const points = [...below, failsAbove(largest.failsAt)].join(' and at ');
+    return `${start}; fails at ${withUnit(points, unit)}.`;
+  }
+  const light = below.length === 0 ? '' : `; fails at ${withUnit(below[0], unit)}`;
+  return largest.undecided
+    ? `${start}${light}; beyond it neither proved nor refuted.`
+    : `${start}${light}; the search ends there, and nothing heavier is known to fail.`;
 }
 
 function verdictSentence(result: Result, approximated: boolean): string {
@@ -139,7 +144,7 @@ function figuresOf(
     const value = plate ?? allowed;
     const test = study.rating?.tests?.find(({ name }) => name === limitedBy);
     facts.push({
-      label: test === undefined ? 'Plate' : `Plate, with the ${test.name} test × ${test.factor}`,
+      label: test === undefined ? 'Plate' : `Plate, with the ${test.name} test ×\u00a0${test.factor}`,
       text: value === null ? 'none' : withUnit(provedTo(value), unit),
     });
   }
@@ -152,7 +157,9 @@ function factsOf(result: Result, limiting: Result['largestPayload'] | Result['sm
   if (stretch !== null) {
     const all = stretch.failsAt === null && stretch.provedTo === stretch.searchedUpTo;
     const text =
-      stretch.provedTo === null ? 'not at all' : `${all ? 'at least ' : ''}× ${provedTo(stretch.provedTo, 3)}`;
+      stretch.provedTo === null
+        ? 'not at all'
+        : `${all ? 'at least ' : ''}×\u00a0${provedTo(stretch.provedTo, 3)}`;
     facts.push({ label: 'Bands may grow together', text });
   }
   const first = limiting?.requirement ?? result.bands.requirement;
@@ -183,7 +190,11 @@ function testsOf(result: Result, study: Study): GaugeTest[] {
 }
 
 /** A point of the bands: each parameter with its value and whether that is an end of its band. */
-function pointOf(study: Study, witness: Record<string, number> | undefined, limitId: string | undefined): Fact[] {
+function pointOf(
+  study: Study,
+  witness: Record<string, number> | undefined,
+  limitId: string | undefined,
+): Fact[] {
   if (witness === undefined) return [];
   return study.parameters.flatMap((parameter) => {
     const value = witness[parameter.id];

@@ -37,14 +37,14 @@ const MOST_CHANGES = 8;
         @if (newer(); as newer) {
           <div class="form-fault" role="alert">
             <p>
-              {{ newer.author }} saved revision {{ newer.number }} meanwhile (<app-moment [at]="newer.at" />). It
-              changed:
+              {{ newer.author }} saved revision {{ newer.number }} meanwhile (<app-moment [at]="newer.at" />).
+              It changed:
             </p>
             <ul>
               @for (change of changes(); track change.path) {
                 <li>
-                  <strong>{{ change.path }}</strong
-                  >: {{ change.before ?? 'nothing' }} → {{ change.after ?? 'nothing' }}
+                  <strong>{{ change.path }}</strong>: {{ change.before ?? 'nothing' }} →
+                  {{ change.after ?? 'nothing' }}
                 </li>
               } @empty {
                 <li>nothing in the study</li>
@@ -56,7 +56,7 @@ const MOST_CHANGES = 8;
             <p>Both stay: yours becomes revision {{ newer.number + 1 }} if you save again.</p>
           </div>
         }
-        <button dialogActs class="button main" [attr.aria-disabled]="submission.sending()">
+        <button dialogActs type="submit" class="button main" [attr.aria-disabled]="submission.sending()">
           Save as revision {{ base().number + 1 }}
         </button>
       </app-dialog-frame>

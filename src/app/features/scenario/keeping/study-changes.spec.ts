@@ -29,7 +29,11 @@ describe('studyChanges', () => {
 
   it('shows what was taken away', () => {
     expect(studyChanges(base, { ...base, requirements: [] })).toEqual([
-      { path: 'requirements.dampingRatio', before: '{"measure":"dampingRatio","atLeast":0.15}', after: undefined },
+      {
+        path: 'requirements.dampingRatio',
+        before: '{"measure":"dampingRatio","atLeast":0.15}',
+        after: undefined,
+      },
     ]);
   });
 });

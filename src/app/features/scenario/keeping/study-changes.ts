@@ -21,7 +21,9 @@ function changesAt(path: string, before: unknown, after: unknown): StudyChange[]
     return was === is ? [] : [{ path, before: was, after: is }];
   }
   const keys = [...new Set([...left.keys(), ...right.keys()])];
-  return keys.flatMap((key) => changesAt(path === '' ? key : `${path}.${key}`, left.get(key), right.get(key)));
+  return keys.flatMap((key) =>
+    changesAt(path === '' ? key : `${path}.${key}`, left.get(key), right.get(key)),
+  );
 }
 
 function entriesOf(value: unknown): Map<string, unknown> | undefined {

@@ -9,7 +9,8 @@ export function scalarText(value: Scalar): string {
 }
 
 export function machineText({ machine }: Study): string {
-  if ('template' in machine) return templates.find(({ id }) => id === machine.template)?.label ?? machine.template;
+  if ('template' in machine)
+    return templates.find(({ id }) => id === machine.template)?.label ?? machine.template;
   return 'coordinates' in machine
     ? `Own machine, coordinates ${machine.coordinates.join(', ')}`
     : `Own machine, states ${machine.states.join(', ')}`;

@@ -17,9 +17,17 @@ export class StudyView {
   protected readonly machine = computed(() => machineText(this.study()));
   protected readonly groups = computed(() =>
     [
-      { title: 'Control', facts: controlFacts(this.study()), none: 'No control: the machine runs without a loop.' },
+      {
+        title: 'Control',
+        facts: controlFacts(this.study()),
+        none: 'No control: the machine runs without a loop.',
+      },
       { title: 'Requirements', facts: requirementFacts(this.study().requirements), none: '' },
-      { title: 'Rating', facts: ratingFacts(this.study()), none: 'No rating: the study asks for no plate value.' },
+      {
+        title: 'Rating',
+        facts: ratingFacts(this.study()),
+        none: 'No rating: the study asks for no plate value.',
+      },
     ].filter(({ facts, none }) => facts.length > 0 || none !== ''),
   );
 

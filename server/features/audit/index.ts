@@ -1,0 +1,1 @@
+export { auditRoutes } from './audit.routes';

@@ -1,0 +1,7 @@
+import { invitationRoutes, type InvitationRoutesDependencies } from './invitation.routes';
+import { administrationRoutes } from './people.routes';
+
+/** Who belongs to the organisation, and how they get in. */
+export function peopleRoutes(dependencies: InvitationRoutesDependencies) {
+  return [...administrationRoutes(dependencies), ...invitationRoutes(dependencies)];
+}

@@ -1,0 +1,2 @@
+export { productRoutes } from './products.routes';
+export { createProduct, type ProductDependencies } from './products.usecases';

@@ -1,0 +1,46 @@
+import { createHash } from 'node:crypto';
+import {
+  answerText,
+  canonicalText,
+  readStudyValue,
+  type Study,
+  StudyFaultError,
+  type Warning,
+} from '../../../shared/contracts';
+import { studyUnusable } from './runs.errors';
+
+/** A study that came to be computed and not kept. */
+export interface ArrivingStudy {
+  readonly study: Study;
+  /** Canonical. */
+  readonly text: string;
+  readonly hash: string;
+  /** Of what the answers depend on. */
+  readonly answerHash: string;
+  readonly warnings: readonly Warning[];
+}
+
+export function sha256(text: string): string {
+  return `sha256:${createHash('sha256').update(text).digest('hex')}`;
+}
+
+/** @throws Problem study-unusable with every fault that can be seen without the engine */
+export function readArrivingStudy(value: unknown): ArrivingStudy {
+  const { study, warnings } = usable(() => readStudyValue(value));
+  const text = canonicalText(study);
+  return { study, text, warnings, hash: sha256(text), answerHash: sha256(answerText(study)) };
+}
+
+function usable<T>(read: () => T): T {
+  try {
+    return read();
+  } catch (error) {
+    throw asProblem(error);
+  }
+}
+
+/** Faults of a study as a problem; any other error as it is. */
+export function asProblem(error: unknown): Error {
+  if (error instanceof StudyFaultError) return studyUnusable(error.faults);
+  return error instanceof Error ? error : new Error('something was thrown that is no error');
+}
