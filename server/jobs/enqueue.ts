@@ -4,7 +4,8 @@ import type { Executor } from '../db';
 export interface JobOrder {
   /** The handler's task. */
   readonly task: string;
-  readonly payload: Readonly<Record<string, unknown>>;
+  /** Of JSON. */
+  readonly payload: unknown;
   /** Jobs of one queue are done one after the other; left out: as workers are free. */
   readonly queue?: string | undefined;
   /** Before others that wait, such as one that was begun already. */

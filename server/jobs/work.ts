@@ -54,7 +54,7 @@ export async function startWorking({ database, handlers, concurrency, log }: Wor
       }
       // It did not fail, it was broken off: a new order costs neither an attempt nor a pause.
       const queue = (await helpers.getQueueName()) ?? undefined;
-      await enqueueJob(db, { task: handler.task, payload: Object(payload), queue, first: true });
+      await enqueueJob(db, { task: handler.task, payload, queue, first: true });
     }
   };
 

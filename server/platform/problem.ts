@@ -1,10 +1,10 @@
-/** One thing that is wrong with a request, and where: `body.name`, `query.limit`. */
+/** One thing that is wrong with a request, and where: `name` in the body, `query.limit`. */
 export interface RequestFault {
   readonly path: string;
   readonly message: string;
 }
 
-/** Members beside those of RFC 9457: `errors` of an invalid request, both versions of a conflict. */
+/** Members beside those of RFC 9457: `faults` of an invalid request, both versions of a conflict. */
 export type ProblemExtensions = Readonly<Record<string, unknown>>;
 
 /**
@@ -19,11 +19,12 @@ export class Problem extends Error {
     readonly code: string,
     readonly status: number,
     readonly title: string,
-    readonly detail?: string,
+    /** What is wrong and what to do, for people; the title where there is nothing more to say. */
+    readonly detail: string = `${title}.`,
     readonly extensions: ProblemExtensions = {},
     readonly headers: Readonly<Record<string, string>> = {},
   ) {
-    super(detail ?? title);
+    super(detail);
   }
 }
 
@@ -32,7 +33,7 @@ export interface ProblemDetails {
   readonly code: string;
   readonly title: string;
   readonly status: number;
-  readonly detail?: string;
+  readonly detail: string;
   readonly requestId: string;
   readonly [extension: string]: unknown;
 }
@@ -45,7 +46,7 @@ export function problemDetails(problem: Problem, requestId: string): ProblemDeta
     code: problem.code,
     title: problem.title,
     status: problem.status,
-    ...(problem.detail === undefined ? {} : { detail: problem.detail }),
+    detail: problem.detail,
     requestId,
   };
 }
@@ -62,8 +63,24 @@ export function defineProblem(kind: { code: string; status: number; title: strin
   return (detail, extensions) => new Problem(kind.code, kind.status, kind.title, detail, extensions);
 }
 
-export function invalidRequest(errors: readonly RequestFault[]): Problem {
-  return new Problem('invalid-request', 400, 'The request has faults', undefined, { errors });
+/** The first fault as text, and how many more there are. */
+function faultText([first, ...more]: readonly RequestFault[]): string {
+  const others = more.length > 0 ? ` And ${more.length} more.` : '';
+  return `${first.path}: ${first.message}.${others}`;
+}
+
+/** @param faults at least one */
+export function invalidRequest(faults: readonly RequestFault[]): Problem {
+  return new Problem('invalid-request', 400, 'The request has faults', faultText(faults), { faults });
+}
+
+/**
+ * A study that cannot be used.
+ *
+ * @param faults at least one, each with its path in the study
+ */
+export function studyUnusable(faults: readonly RequestFault[]): Problem {
+  return new Problem('study-unusable', 422, 'The study cannot be used', faultText(faults), { faults });
 }
 
 export const malformedJson = defineProblem({

@@ -169,15 +169,20 @@ describe('products', () => {
   it('lets the last designer neither go nor lose the role, even where two are removed at once', async () => {
     const { productId, designer, secondDesigner, administrator } = await makeTeam(api());
     const members = `/api/products/${productId}/members`;
-    const answers = await Promise.all([
-      administrator.delete(`${members}/${designer.id}`),
-      administrator.put(`${members}/${secondDesigner.id}`, { role: 'viewer' }),
-    ]);
-    const refused = answers.filter(({ status }) => status === 409);
-    expect(refused).toHaveLength(1);
-    expect(refused[0].read(problemSchema).code).toBe('last-designer');
-    const listed = (await administrator.get(members)).read(memberListSchema).items;
-    expect(listed.filter(({ role }) => role === 'designer')).toHaveLength(1);
+    for (let round = 0; round < 15; round++) {
+      const answers = await Promise.all([
+        administrator.delete(`${members}/${designer.id}`),
+        administrator.put(`${members}/${secondDesigner.id}`, { role: 'viewer' }),
+      ]);
+      const refused = answers.filter(({ status }) => status === 409);
+      expect(refused).toHaveLength(1);
+      expect(refused[0].read(problemSchema).code).toBe('last-designer');
+      const listed = (await administrator.get(members)).read(memberListSchema).items;
+      expect(listed.filter(({ role }) => role === 'designer')).toHaveLength(1);
+      for (const { id } of [designer, secondDesigner]) {
+        await administrator.put(`${members}/${id}`, { role: 'designer' });
+      }
+    }
   });
 
   it('does not count a designer who can no longer sign in', async () => {

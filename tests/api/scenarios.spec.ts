@@ -167,7 +167,7 @@ describe('scenarios', () => {
       return parameters[0].high ?? 0;
     });
     expect(kept.sort((a, b) => a - b)).toEqual(Array.from({ length: 200 }, (_, i) => 1000 + i));
-  });
+  }, 60_000);
 
   it('are named uniquely within their variant', async () => {
     const team = await makeTeam(api());

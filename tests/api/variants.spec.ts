@@ -2,7 +2,7 @@ import { asc, eq } from 'drizzle-orm';
 import { describe, expect, it } from 'vitest';
 import { z } from 'zod';
 import { problemSchema, scenarioSchema, variantSchema } from '../../shared/contracts/api';
-import { audit, scenarioRevisions, scenarios, variantRevisions } from '../../server/db/schema';
+import { audit, scenarioRevisions, scenarios, variantRevisions, variants } from '../../server/db/schema';
 import { liftTableStudy } from './support/lift-table-study';
 import { makeRun, makeScenario, makeTeam, makeVariant, readScenario, type Team } from './support/team';
 import { useApi } from './support/test-api';
@@ -95,6 +95,21 @@ describe('variants', () => {
     expect((await team.viewer.get(path)).read(listSchema).items).toEqual([]);
   });
 
+  it('shows the newest run of the newest revision of each scenario', async () => {
+    const team = await makeTeam(api());
+    const scenario = await makeScenario(team, 'Short');
+    await makeRun(api(), scenario, team.designer);
+    const id = await makeRun(api(), scenario, team.designer);
+    const runOf = async () => {
+      const answer = await team.viewer.get(`/api/variants/${scenario.variantId}`);
+      return answer.read(variantSchema).scenarios[0].run;
+    };
+    expect(await runOf()).toMatchObject({ id, state: 'queued', verdict: null });
+    expect((await readScenario(team.viewer, scenario.id)).head.run).toEqual(await runOf());
+    await save(team, scenario.id, 1, liftTableStudy({ heaviest: 500 }));
+    expect(await runOf()).toBeNull();
+  });
+
   it('lists variants in the order in which they were made', async () => {
     const team = await makeTeam(api());
     for (const name of ['Zero', 'Alpha', 'Middle']) await makeVariant(team, name);
@@ -104,10 +119,14 @@ describe('variants', () => {
 
   it('gives every variant a place of its own where many are made at once', async () => {
     const team = await makeTeam(api());
-    const names = Array.from({ length: 12 }, (_, i) => `Variant ${i}`);
+    const names = Array.from({ length: 9 }, (_, i) => `Variant ${i}`);
     await Promise.all(names.map((name) => makeVariant(team, name)));
-    const { items } = (await team.viewer.get(`/api/products/${team.productId}/variants`)).read(listSchema);
-    expect(items.map(({ name }) => name).sort()).toEqual([...names].sort());
+    const rows = await api()
+      .database.db.select({ position: variants.position })
+      .from(variants)
+      .where(eq(variants.productId, team.productId))
+      .orderBy(asc(variants.position));
+    expect(rows.map(({ position }) => position)).toEqual(names.map((_, i) => i + 1));
   });
 
   it('refuses a name that another variant of the product has', async () => {

@@ -90,11 +90,11 @@ describe('the order of coordinates and parameters', () => {
 });
 
 describe('the units of a study', () => {
-  const parameters = [
-    { id: 'm', unit: 'kg', nominal: 300, low: 40, high: 480, minimum: 0, kind: 'use' },
-    { id: 'k', unit: 'N/m', nominal: 150000, low: 120000, high: 185000 },
-    { id: 'tau', unit: 's', nominal: 0.008, low: 0.005, high: 0.011, minimum: 0.001 },
-    { id: 'h', unit: 'm', nominal: 0.5, low: 0.45, high: 0.55 },
+  const parameters: { id: string; unit: string; kind?: string; values: Record<string, number> }[] = [
+    { id: 'm', unit: 'kg', kind: 'use', values: { nominal: 300, low: 40, high: 480, minimum: 0 } },
+    { id: 'k', unit: 'N/m', values: { nominal: 150000, low: 120000, high: 185000 } },
+    { id: 'tau', unit: 's', values: { nominal: 0.008, low: 0.005, high: 0.011, minimum: 0.001 } },
+    { id: 'h', unit: 'm', values: { nominal: 0.5, low: 0.45, high: 0.55 } },
   ];
   const inUnits = (units: Record<string, [string, number]>, searchUpTo: number): Result =>
     analyseValue({
@@ -117,13 +117,13 @@ describe('the units of a study', () => {
         inputs: { u: [1, 0] },
         outputs: { drive: { position: [1, 0] } },
       },
-      parameters: parameters.map((parameter) => {
-        const [unit, perSi] = units[parameter.id] ?? [parameter.unit, 1];
-        const converted = Object.entries(parameter).map(([key, value]): [string, string | number] => [
+      parameters: parameters.map(({ id, unit, values, ...rest }) => {
+        const [ownUnit, perSi] = units[id] ?? [unit, 1];
+        const own = Object.entries(values).map(([key, value]) => [
           key,
-          typeof value === 'number' ? Number((value * perSi).toPrecision(12)) : value,
+          Number((value * perSi).toPrecision(12)),
         ]);
-        return { ...Object.fromEntries(converted), unit };
+        return { id, unit: ownUnit, ...rest, ...(Object.fromEntries(own) as Record<string, number>) };
       }),
       payload: 'm',
       searchUpTo,

@@ -18,7 +18,11 @@ export function runTypes(root) {
     root,
     projects.map((project) => ({
       label: `types ${project}`,
-      script: 'node_modules/typescript/bin/tsc',
+      // Angular's own compiler, for the types in the templates.
+      script:
+        project === 'tsconfig.app.json'
+          ? 'node_modules/@angular/compiler-cli/bundles/src/bin/ngc.js'
+          : 'node_modules/typescript/bin/tsc',
       args: [
         ...['--project', project, '--noEmit', '--pretty', 'false', '--incremental'],
         ...['--tsBuildInfoFile', `dist/types/${project}.tsbuildinfo`],
@@ -65,20 +69,44 @@ function readOutcome(outcomeFile) {
 
 /**
  * @param {string} root
- * @param {string[]} filters passed on to the test runner, to run a part of the tests
+ * @param {string} outcomeFile what the run writes
+ * @param {import('./child-process.mjs').Task} task
  */
-async function runVitest(root, filters) {
-  const outcomeFile = join(root, 'dist', 'test-outcome.json');
+async function runCounted(root, outcomeFile, task) {
   rmSync(outcomeFile, { force: true });
-  const status = await runShown(root, {
-    label: 'tests',
-    script: 'node_modules/vitest/vitest.mjs',
-    args: ['run', '--reporter=default', '--reporter=json', `--outputFile.json=${outcomeFile}`, ...filters],
-  });
+  const status = await runShown(root, task);
   const { passed, failed } = readOutcome(outcomeFile);
   // Errors outside of any test, and a run in which nothing was tested, must not look like success.
   const unseen = failed === 0 && (status !== 0 || passed === 0) ? 1 : 0;
   return { passed, failed: failed + unseen };
+}
+
+/**
+ * @param {string} root
+ * @param {string[]} filters passed on to the test runner, to run a part of the tests
+ */
+function runVitest(root, filters) {
+  const outcomeFile = join(root, 'dist', 'test-outcome.json');
+  return runCounted(root, outcomeFile, {
+    label: 'tests',
+    script: 'node_modules/vitest/vitest.mjs',
+    args: ['run', '--reporter=default', '--reporter=json', `--outputFile.json=${outcomeFile}`, ...filters],
+  });
+}
+
+/**
+ * Component tests are built by Angular before they run, hence a run of their own.
+ *
+ * @param {string} root
+ */
+function runPageTests(root) {
+  const outcomeFile = join(root, 'dist', 'test-outcome-pages.json');
+  return runCounted(root, outcomeFile, {
+    label: 'tests of the pages',
+    script: 'node_modules/@angular/cli/bin/ng.js',
+    // The output file belongs to the reporter that is named first.
+    args: ['test', '--no-watch', '--reporters=json', '--reporters=default', `--output-file=${outcomeFile}`],
+  });
 }
 
 /**
@@ -92,7 +120,8 @@ export async function runTests(root, filters) {
   const types = await runTypes(root);
   const lint = await runLint(root);
   const tests = await runVitest(root, filters);
-  const failed = types + lint + tests.failed;
-  process.stdout.write(`\n${tests.passed} passed, ${failed} failed\n`);
+  const pages = filters.length === 0 ? await runPageTests(root) : { passed: 0, failed: 0 };
+  const failed = types + lint + tests.failed + pages.failed;
+  process.stdout.write(`\n${tests.passed + pages.passed} passed, ${failed} failed\n`);
   return failed === 0 ? 0 : 1;
 }

@@ -14,6 +14,7 @@ export function listedRun({ queuedAt, startedAt, finishedAt, ...row }: RunRow): 
 
 /** JSON text of a run with its result, whose text goes out as it was stored, digit by digit. */
 export function runText({ result, ...row }: RunRow & { result: string | null }): string {
-  const { figures: _, ...run } = listedRun(row);
+  // A key without a value is left out of the text: a run has its result instead.
+  const run = { ...listedRun(row), figures: undefined };
   return `${JSON.stringify(run).slice(0, -1)},"result":${result ?? 'null'}}`;
 }

@@ -33,7 +33,8 @@ export function studyUnusable(faults: readonly Fault[]): Problem {
   return unusable(`${path}: ${message}.${more}`, { faults });
 }
 
-export const previewSuperseded = () => overtaken();
+export const previewSuperseded = () =>
+  overtaken('Its answer would be out of date; wait for that of the newer one.');
 export const previewTooLong = () => tooLong('Save the scenario and start a run.');
 export const tooManyPreviews = (most: number) =>
   tooMany(`At most ${most} previews of one person are computed at a time.`);

@@ -1,5 +1,5 @@
 import { canonicalJson, DEEPEST_NESTING } from '../../../shared/contracts';
-import { studyUnusable } from './scenarios.errors';
+import { studyUnusable } from '../../platform/problem';
 
 /**
  * The text of a draft. A draft need not be a usable study: a form that is half filled in is kept as well, or a

@@ -1,7 +1,5 @@
-import type { Fault } from '../../../shared/contracts';
 import { defineProblem, notFound, type Problem } from '../../platform/problem';
 
-const unusable = defineProblem({ code: 'study-unusable', status: 422, title: 'The study cannot be used' });
 const overtaken = defineProblem({
   code: 'scenario-changed',
   status: 409,
@@ -27,12 +25,6 @@ const reviewed = defineProblem({
   status: 409,
   title: 'A review stands on this scenario',
 });
-
-export function studyUnusable(faults: readonly Fault[]): Problem {
-  const [{ path, message }] = faults;
-  const more = faults.length > 1 ? ` And ${faults.length - 1} more.` : '';
-  return unusable(`${path}: ${message}.${more}`, { faults });
-}
 
 /** @param current the head of the scenario, @param sent what was to be saved on top of an older one */
 export function scenarioChanged(current: { number: number; author: string }, sent: unknown): Problem {

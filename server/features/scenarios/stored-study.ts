@@ -6,7 +6,7 @@ import {
   type Study,
   StudyFaultError,
 } from '../../../shared/contracts';
-import { studyUnusable } from './scenarios.errors';
+import { studyUnusable } from '../../platform/problem';
 
 /** A study as it is stored: its one text, and what identifies it and its answers. */
 export interface StoredStudy {

@@ -1,3 +1,4 @@
+import { setMaxListeners } from 'node:events';
 import { type Request, type RequestHandler, type Response, Router } from 'express';
 import type { z } from 'zod';
 import { methodNotAllowed, notFound } from '../problem';
@@ -119,6 +120,8 @@ function checkRoutes<Rule>(routes: readonly Route<Rule>[]): void {
 
 /** The routes of the API, to be mounted under /api; anything else there is answered 404 or 405. */
 export function mountRoutes<Rule>({ routes, ...options }: MountOptions<Rule>): Router {
+  // One listener a request under way: many are no leak.
+  setMaxListeners(0, options.stopping);
   checkRoutes(routes);
   const router = Router({ caseSensitive: true, strict: true });
   const methods = new Map<string, string[]>();

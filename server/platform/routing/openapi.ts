@@ -5,7 +5,7 @@ type JsonObject = Record<string, unknown>;
 
 const PROBLEM: JsonObject = {
   type: 'object',
-  required: ['type', 'code', 'title', 'status', 'requestId'],
+  required: ['type', 'code', 'title', 'status', 'detail', 'requestId'],
   properties: {
     type: { type: 'string' },
     code: { type: 'string', description: 'Stable name of the kind of problem.' },
@@ -13,9 +13,9 @@ const PROBLEM: JsonObject = {
     status: { type: 'integer' },
     detail: { type: 'string' },
     requestId: { type: 'string' },
-    errors: {
+    faults: {
       type: 'array',
-      description: 'With the code invalid-request: every fault and where it is.',
+      description: 'With the codes invalid-request and study-unusable: every fault and where it is.',
       items: {
         type: 'object',
         required: ['path', 'message'],

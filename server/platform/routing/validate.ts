@@ -1,12 +1,13 @@
 import type { z } from 'zod';
 import { invalidRequest, type RequestFault } from '../problem';
 
-/** `items`, 0, `name` → `items[0].name` */
+/** `items`, 0, `name` → `items[0].name`; only what stands outside of the body says where. */
 function pathText(root: string, path: readonly PropertyKey[]): string {
-  return path.reduce<string>(
-    (text, part) => (typeof part === 'number' ? `${text}[${part}]` : `${text}.${String(part)}`),
-    root,
-  );
+  const start = root === 'body' && path.length > 0 ? '' : root;
+  return path.reduce<string>((text, part) => {
+    if (typeof part === 'number') return `${text}[${part}]`;
+    return text === '' ? String(part) : `${text}.${String(part)}`;
+  }, start);
 }
 
 /**

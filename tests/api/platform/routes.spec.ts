@@ -79,10 +79,10 @@ describe('a route', () => {
     expect(answer.status).toBe(400);
     expect(answer.headers['content-type']).toBe('application/problem+json; charset=utf-8');
     const problem = answer.read(
-      z.object({ code: z.string(), errors: z.array(z.object({ path: z.string() })) }),
+      z.object({ code: z.string(), faults: z.array(z.object({ path: z.string() })) }),
     );
     expect(problem.code).toBe('invalid-request');
-    expect(problem.errors.map(({ path }) => path)).toEqual(['query.limit', 'body.name', 'body.weights[1]']);
+    expect(problem.faults.map(({ path }) => path)).toEqual(['query.limit', 'name', 'weights[1]']);
   });
 
   it('answers 404 for a parameter that cannot name anything', async () => {

@@ -25,12 +25,16 @@ describe('rangesOfRun', () => {
     expect(rangesOfRun({ ...run, state: 'queued', verdict: null })).toBeUndefined();
   });
 
-  it('tells a failure at the light end from one at the heavy end', () => {
+  it('concludes that the light end fails where the heavy end is proved', () => {
     expect(rangesOfRun(run)).toMatchObject({ failsAbove: 572.31, failsBelow: undefined });
-    expect(rangesOfRun({ ...run, provedLow: 85, failsAt: 84.9 })).toMatchObject({
-      failsAbove: undefined,
-      failsBelow: 84.9,
-    });
+    const light = rangesOfRun({ ...run, verdict: 'fails', provedLow: 85 });
+    expect(light).toMatchObject({ failsAbove: 572.31, failsBelow: 'somewhere' });
+    expect(rangesInWords(light ?? {}, 'kg')).toContain('fails below that');
+  });
+
+  it('concludes nothing of the light end where the heavy end fails as well', () => {
+    const both = rangesOfRun({ ...run, verdict: 'fails', provedLow: 85, provedHigh: 470 });
+    expect(both?.failsBelow).toBeUndefined();
   });
 });
 
