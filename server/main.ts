@@ -111,7 +111,10 @@ export async function serve(options: ServeOptions): Promise<RunningServer> {
   const endings: (() => Promise<void>)[] = [];
   const stop = async () => {
     stopping.abort();
-    for (const end of endings) await end();
+    for (const end of endings) {
+      // What cannot be ended properly keeps nothing else from it.
+      await end().catch((error: unknown) => log.warn({ error }, 'a part of the server did not end in order'));
+    }
   };
   try {
     const database = connectDatabase({ url: databaseUrl, log });

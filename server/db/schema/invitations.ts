@@ -14,9 +14,8 @@ export const invitations = pgTable(
     email: text().notNull(),
     organisationRole: organisationRole().notNull().default('member'),
     mayCreateProducts: boolean().notNull().default(false),
-    invitedBy: uuid()
-      .notNull()
-      .references(() => people.id),
+    /** Null for the first administrator, whom nobody could invite. */
+    invitedBy: uuid().references(() => people.id),
     createdAt: writtenAt(),
     expiresAt: moment().notNull(),
     acceptedAt: moment(),

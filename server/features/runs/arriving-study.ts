@@ -7,7 +7,7 @@ import {
   StudyFaultError,
   type Warning,
 } from '../../../shared/contracts';
-import { studyUnusable } from './runs.errors';
+import { studyUnusable } from '../../platform/problem';
 
 /** A study that came to be computed and not kept. */
 export interface ArrivingStudy {

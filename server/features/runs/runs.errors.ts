@@ -1,8 +1,6 @@
-import type { Fault } from '../../../shared/contracts';
 import { defineProblem, notFound, type Problem } from '../../platform/problem';
 
 const over = defineProblem({ code: 'run-over', status: 409, title: 'The run is over' });
-const unusable = defineProblem({ code: 'study-unusable', status: 422, title: 'The study cannot be used' });
 const overtaken = defineProblem({
   code: 'preview-superseded',
   status: 409,
@@ -25,12 +23,6 @@ export const noMap = () => notFound('The run has no map, or is not done.');
 
 export function runIsOver(state: string): Problem {
   return over(`It is ${state}; only a run that waits or computes can be cancelled.`);
-}
-
-export function studyUnusable(faults: readonly Fault[]): Problem {
-  const [{ path, message }] = faults;
-  const more = faults.length > 1 ? ` And ${faults.length - 1} more.` : '';
-  return unusable(`${path}: ${message}.${more}`, { faults });
 }
 
 export const previewSuperseded = () =>

@@ -1,4 +1,4 @@
 import type { RunSummary } from '../../../shared/contracts/api';
 
-/** The newest run of each scenario revision, by the revision's key; revisions without a run are not in it. */
+/** The run that stands for each scenario revision, by the revision's key; nothing for one that was never run. */
 export type SummariesOf = (revisionIds: readonly string[]) => Promise<ReadonlyMap<string, RunSummary>>;

@@ -3,6 +3,8 @@ import type { MapGrid } from '../engine-task';
 /** Each grid has about four times the nodes of the one before. */
 const REFINEMENT = 2;
 const FEWEST_NODES = 5;
+/** What else runs on the machine may slow a grid down against the one before. */
+const CAUTION = 1.5;
 
 function coarser(count: number, times: number): number {
   return Math.min(count, Math.max(FEWEST_NODES, Math.ceil((count - 1) / REFINEMENT ** times) + 1));
@@ -38,7 +40,7 @@ export function finestUntil<T>(
   for (const next of finer) {
     const now = clock();
     const count = next.columns * next.rows;
-    if (now + ((now - begun) / nodes) * count > until) break;
+    if (now + CAUTION * ((now - begun) / nodes) * count > until) break;
     begun = now;
     nodes = count;
     answer = compute(next);

@@ -1,0 +1,1 @@
+export { type DemoDependencies, demoSeed, type SignIn } from './demo.usecases';
