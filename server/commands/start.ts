@@ -3,10 +3,13 @@
 // Exit status: 0 stopped by a signal, 1 stopped at once by a second one, 3 it could not be set up.
 
 import process from 'node:process';
+import { ENGINE_VERSION } from '../../shared/engine/analysis/engine-version';
+import { demoSeed } from '../features/demo';
 import { requireFreeAddress, serve } from '../main';
 import { type Configuration, readConfiguration } from '../platform/configuration';
 import { createLog, type Log, standardError } from '../platform/log';
 import { stopOnSignals } from '../platform/shutdown';
+import { firstAdministratorLines } from './start/fill-empty-database';
 import { prepareDatabase } from './start/prepare-database';
 import { signInLines } from './start/sign-ins';
 import { reportFailure } from './report-failure';
@@ -19,12 +22,18 @@ async function stopAll(): Promise<void> {
 }
 
 async function start(configuration: Configuration, log: Log): Promise<void> {
-  const database = await prepareDatabase({ configuration, log, demo: undefined });
+  const demo = demoSeed({ engineVersion: ENGINE_VERSION });
+  const database = await prepareDatabase({ configuration, log, demo });
   started.unshift(database);
   const server = await serve({ configuration, databaseUrl: database.url, log });
   started.unshift({ stop: () => server.stop(), abandon: () => undefined });
 
-  const lines = [`Tareline is ready at ${server.address}`, ...signInLines(database.signIns)];
+  const { signIns, firstAdministrator } = database;
+  const lines = [
+    `Tareline is ready at ${server.address}`,
+    ...signInLines(signIns),
+    ...(firstAdministrator === undefined ? [] : firstAdministratorLines(server.address, firstAdministrator)),
+  ];
   process.stdout.write(`\n${lines.join('\n')}\n\n`);
 }
 

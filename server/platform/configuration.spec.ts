@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { ConfigurationError, readConfiguration } from './configuration';
+import { ConfigurationError, readConfiguration, servesThisMachineOnly } from './configuration';
 
 describe('readConfiguration', () => {
   it('serves on loopback at port 4300 with a database of its own where nothing is said', () => {
@@ -7,6 +7,7 @@ describe('readConfiguration', () => {
       http: { host: '127.0.0.1', port: 4300, origin: undefined, trustedProxies: [] },
       database: { url: undefined, ownerUrl: undefined },
       mail: undefined,
+      administratorEmail: undefined,
       logLevel: 'info',
     });
   });
@@ -54,6 +55,7 @@ describe('readConfiguration', () => {
     [{ PUBLIC_ORIGIN: 'https://a.example/path' }, /PUBLIC_ORIGIN must be an address without a path/],
     [{ DATABASE_OWNER_URL: 'postgres://a@b/c' }, /DATABASE_OWNER_URL is of no use/],
     [{ SMTP_URL: 'smtp://a' }, /MAIL_FROM must be set/],
+    [{ ADMINISTRATOR_EMAIL: 'somebody' }, /ADMINISTRATOR_EMAIL must be an e-mail address/],
   ])('refuses %j', (environment, message) => {
     expect(() => readConfiguration(environment)).toThrow(ConfigurationError);
     expect(() => readConfiguration(environment)).toThrow(message);
@@ -61,5 +63,21 @@ describe('readConfiguration', () => {
 
   it('names every fault, not only the first', () => {
     expect(() => readConfiguration({ PORT: 'x', LOG_LEVEL: 'loud' })).toThrow(/PORT[^]*LOG_LEVEL/);
+  });
+});
+
+describe('servesThisMachineOnly', () => {
+  it.each([
+    [{}, true],
+    [{ HOST: '::1' }, true],
+    [{ PUBLIC_ORIGIN: 'http://localhost:8080' }, true],
+    [{ PUBLIC_ORIGIN: 'https://[::1]' }, true],
+    [{ PUBLIC_ORIGIN: 'https://tareline.example' }, false],
+    [{ PUBLIC_ORIGIN: 'https://localhost.example' }, false],
+    [{ HOST: '0.0.0.0', PUBLIC_ORIGIN: 'https://tareline.example' }, false],
+    // Whoever reaches the host comes in, whatever browsers are to use.
+    [{ HOST: '0.0.0.0', PUBLIC_ORIGIN: 'https://localhost' }, false],
+  ])('of %j is %s', (environment, expected) => {
+    expect(servesThisMachineOnly(readConfiguration(environment).http)).toBe(expected);
   });
 });

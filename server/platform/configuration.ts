@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { emailSchema } from '../../shared/contracts/api';
 
 /** Something in the environment that the server cannot work with; the message is all that the person needs. */
 export class ConfigurationError extends Error {
@@ -34,6 +35,8 @@ export interface Configuration {
   readonly http: HttpConfiguration;
   readonly database: DatabaseConfiguration;
   readonly mail: MailConfiguration | undefined;
+  /** Who is invited first where nobody is in the organisation yet; stated by those who want no demo. */
+  readonly administratorEmail: string | undefined;
   readonly logLevel: LogLevel;
 }
 
@@ -69,6 +72,7 @@ const environmentSchema = z
     DATABASE_OWNER_URL: optional(urlOf('postgres:', 'postgresql:')),
     SMTP_URL: optional(urlOf('smtp:', 'smtps:')),
     MAIL_FROM: optional(z.string()),
+    ADMINISTRATOR_EMAIL: optional(emailSchema),
     LOG_LEVEL: optional(z.enum(['silent', 'error', 'warn', 'info', 'debug'])),
   })
   .refine((env) => env.DATABASE_OWNER_URL === undefined || env.DATABASE_URL !== undefined, {
@@ -83,6 +87,11 @@ const environmentSchema = z
 /** Whether a host name or address can be reached from this machine only. */
 export function isLoopback(host: string): boolean {
   return host === 'localhost' || host === '::1' || host === '[::1]' || /^127(\.\d{1,3}){3}$/.test(host);
+}
+
+/** Whether nobody on another machine reaches the server: neither directly nor through a proxy. */
+export function servesThisMachineOnly({ host, origin }: Pick<HttpConfiguration, 'host' | 'origin'>): boolean {
+  return isLoopback(host) && (origin === undefined || isLoopback(new URL(origin).hostname));
 }
 
 function proxiesOf(stated: string | undefined, origin: string | undefined): string[] {
@@ -124,6 +133,7 @@ export function readConfiguration(environment: Record<string, string | undefined
       env.SMTP_URL === undefined || env.MAIL_FROM === undefined
         ? undefined
         : { smtpUrl: env.SMTP_URL, from: env.MAIL_FROM },
+    administratorEmail: env.ADMINISTRATOR_EMAIL,
     logLevel: env.LOG_LEVEL ?? 'info',
   };
 }

@@ -1,5 +1,5 @@
 import type { Routes } from '@angular/router';
-import { administrator, signedIn, signedOut } from './core/session';
+import { administrator, anybody, signedIn, signedOut } from './core/session';
 
 const forbidden = () => import('./shell/forbidden').then((page) => page.Forbidden);
 
@@ -63,5 +63,9 @@ export const routes: Routes = [
       { path: 'people/:part', loadComponent: forbidden },
     ],
   },
-  { path: '**', loadComponent: () => import('./shell/not-found').then((page) => page.NotFound) },
+  {
+    path: '**',
+    canActivate: [anybody],
+    loadComponent: () => import('./shell/not-found').then((page) => page.NotFound),
+  },
 ];

@@ -165,7 +165,7 @@ describe('the queue', () => {
     await order(3);
     await last.promise;
     expect(done).toEqual([1, 3]);
-    expect(await waiting()).toMatchObject([{ number: 2, held: true }]);
+    await expect.poll(waiting).toMatchObject([{ number: 2, held: true }]);
     expect(memory.lines.join('')).toMatch(/workers have died/);
   });
 

@@ -37,4 +37,10 @@ describe('studies that went wrong once', () => {
     expect(nominal.stable).toBe(true);
     expect(nominal.poles).toHaveLength(7);
   });
+
+  it('a search whose end does not convert without rounding: proved to the end itself', () => {
+    const { largestPayload } = analysed('search-end-in-tonnes');
+    expect(largestPayload?.failsAt).toBeNull();
+    expect(largestPayload?.provedTo).toBe(largestPayload?.searchedUpTo);
+  });
 });

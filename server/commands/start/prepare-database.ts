@@ -1,19 +1,19 @@
 import { createHash } from 'node:crypto';
 import { join } from 'node:path';
 import process from 'node:process';
-import { connectDatabase, migrate, type Seed, seedIfEmpty } from '../../db';
+import { connectDatabase, migrate, type Seed } from '../../db';
 import { APPLICATION_ROLE } from '../../db/roles';
-import { type Configuration, isLoopback } from '../../platform/configuration';
+import type { SignIn } from '../../features/demo';
+import type { Configuration } from '../../platform/configuration';
 import type { Log } from '../../platform/log';
 import { packageRoot } from '../../platform/package-root';
 import { foreignDatabase } from '../database/foreign-database';
 import { makePassable } from '../database/cluster';
 import { openPrivateDatabase } from '../database/private-database';
-import { keepSignIns, keptSignIns, type SignIn } from './sign-ins';
+import { fillEmptyDatabase, type WaysIn } from './fill-empty-database';
 
-export interface PreparedDatabase {
+export interface PreparedDatabase extends WaysIn {
   readonly url: string;
-  readonly signIns: readonly SignIn[];
   stop(): Promise<void>;
   /** The same, without waiting. */
   abandon(): void;
@@ -22,8 +22,7 @@ export interface PreparedDatabase {
 export interface PrepareOptions {
   readonly configuration: Configuration;
   readonly log: Log;
-  /** Fills an empty database with a demo; undefined for none. */
-  readonly demo: Seed<readonly SignIn[]> | undefined;
+  readonly demo: Seed<readonly SignIn[]>;
 }
 
 /** A database that can be reached, before it was brought up to date. */
@@ -44,17 +43,22 @@ function say(line: string): void {
   process.stderr.write(`tareline: ${line}\n`);
 }
 
+/** Where the demo's sign-ins of a database on another server are kept. */
+export function foreignSignInFile(home: string, databaseUrl: string): string {
+  const { host, pathname } = new URL(databaseUrl);
+  const digest = createHash('sha256').update(`${host}${pathname}`).digest('hex').slice(0, 12);
+  return join(home, `demo-sign-ins-${digest}.json`);
+}
+
 function foreignSource({ database }: Configuration): Source | undefined {
   const foreign = foreignDatabase(database);
   if (foreign === undefined) return undefined;
   if (foreign.applicationRole === undefined) say(ONE_ROLE);
   const home = join(packageRoot, '.data');
   makePassable(home);
-  const { host, pathname } = new URL(foreign.url);
-  const digest = createHash('sha256').update(`${host}${pathname}`).digest('hex').slice(0, 12);
   return {
     ...foreign,
-    signInFile: join(home, `demo-sign-ins-${digest}.json`),
+    signInFile: foreignSignInFile(home, foreign.url),
     stop: () => Promise.resolve(),
     abandon: () => undefined,
   };
@@ -69,13 +73,13 @@ async function privateSource(): Promise<Source> {
   };
 }
 
-/** A demo's passwords are printed: no such account where other machines can reach the server. */
-async function seedDemo(source: Source, { configuration, demo, log }: PrepareOptions): Promise<void> {
-  if (demo === undefined || !isLoopback(configuration.http.host)) return;
-  const database = connectDatabase({ url: source.url, log, name: 'tareline seed' });
+async function fill(
+  { url, signInFile }: Source,
+  { configuration, demo, log }: PrepareOptions,
+): Promise<WaysIn> {
+  const database = connectDatabase({ url, log, name: 'tareline seed' });
   try {
-    const signIns = await seedIfEmpty(database.db, demo);
-    if (signIns !== undefined) keepSignIns(source.signInFile, signIns);
+    return await fillEmptyDatabase({ db: database.db, configuration, demo, signInFile, now: new Date() });
   } finally {
     await database.close();
   }
@@ -83,7 +87,7 @@ async function seedDemo(source: Source, { configuration, demo, log }: PrepareOpt
 
 /**
  * The database of the server: a foreign one where DATABASE_URL names it, else the private one of this checkout;
- * brought up to date, and filled with the demo where it is empty.
+ * brought up to date, and not without a way in.
  *
  * @throws SetupFailure, SchemaMismatchError
  */
@@ -91,10 +95,9 @@ export async function prepareDatabase(options: PrepareOptions): Promise<Prepared
   const source = foreignSource(options.configuration) ?? (await privateSource());
   try {
     if (await migrate(source)) say('the database was brought up to date');
-    await seedDemo(source, options);
+    return { ...source, ...(await fill(source, options)) };
   } catch (error) {
     await source.stop();
     throw error;
   }
-  return { ...source, signIns: keptSignIns(source.signInFile) };
 }

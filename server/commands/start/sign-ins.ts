@@ -1,12 +1,5 @@
 import { existsSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
-
-/** A way to sign in that was made together with the demo. */
-export interface SignIn {
-  readonly email: string;
-  readonly password: string;
-  /** What this person is in the demo, in a few words. */
-  readonly role: string;
-}
+import type { SignIn } from '../../features/demo';
 
 /** Keeps the demo's sign-ins, for the present user's eyes only. */
 export function keepSignIns(file: string, signIns: readonly SignIn[]): void {

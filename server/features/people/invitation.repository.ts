@@ -60,6 +60,14 @@ export async function revokeOpenInvitations(tx: Tx, email: string, now: Date): P
     .where(and(eq(sql`lower(${invitations.email})`, email.toLowerCase()), isOpen));
 }
 
+/** Withdraws what is open and was sent by nobody: the invitation of a first administrator. */
+export async function revokeFirstInvitations(tx: Tx, now: Date): Promise<void> {
+  await tx
+    .update(invitations)
+    .set({ revokedAt: now })
+    .where(and(isNull(invitations.invitedBy), isOpen));
+}
+
 /** The organisation's name; the product's own until somebody has set one. */
 export async function findOrganisationName(db: Executor): Promise<string> {
   const [settings] = await db.select({ name: organisationSettings.name }).from(organisationSettings);

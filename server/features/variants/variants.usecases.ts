@@ -57,7 +57,7 @@ export async function readVariant(dependencies: VariantDependencies, variantId: 
  * @returns the key of the variant
  */
 export function createVariant(
-  { db }: VariantDependencies,
+  { db }: Pick<VariantDependencies, 'db'>,
   actor: Actor,
   productId: string,
   { name, study }: VariantDraft,

@@ -99,7 +99,7 @@ class Analysis {
     const search = this.searchFor(study.requirements);
     const stability = this.searchFor([{ measure: 'stability', limit: 0, law }]);
     const stable = stability.proved ? stability.nominalContact() === undefined : undefined;
-    const nominal = nominalAnswer(this.model.probe(law), space.nominal, stable);
+    const nominal = nominalAnswer(this.model.probe(law), space.nominal, stable, this.polesAtOrigin(law));
     if (nominal === undefined) {
       throw new StudyFaultError([
         {
@@ -141,6 +141,15 @@ class Analysis {
       ...(study.warnings.length > 0 && { warnings: [...study.warnings] }),
       work: { boxes: this.work.boxes, milliseconds: options.clock() - start },
     };
+  }
+
+  /** Exactly: the power of s that divides the characteristic polynomial at the nominal point. */
+  private polesAtOrigin(law: number): number {
+    const polynomial = this.model.polynomial(law);
+    if (polynomial === undefined) return 0;
+    const { broken, returned } = evaluateExactly(polynomial, this.space.nominal);
+    const first = broken.findIndex((value, k) => value + returned[k] !== 0n);
+    return Math.max(0, first);
   }
 
   private searchFor(requirements: readonly ComposedRequirement[]): AnswerSearch {

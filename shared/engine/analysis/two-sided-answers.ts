@@ -40,22 +40,19 @@ export class AnswerFormat {
 
   largest(answer: TwoSided, searchedUpTo: number): UpwardAnswer {
     const payload = this.payloadParameter();
+    // The end of the search is the study's own number: rounding it to the safe side would make it another.
+    const end = inUnit(payload, searchedUpTo);
     const value = (objective: number): number =>
-      objective >= searchedUpTo - payload.nominal ? searchedUpTo : payload.nominal + objective;
-    return {
-      ...this.sides(answer, (objective) => inUnitDown(payload, value(objective)), this.payloadOf(answer)),
-      searchedUpTo: inUnit(payload, searchedUpTo),
-    };
+      objective >= searchedUpTo - payload.nominal ? end : inUnitDown(payload, payload.nominal + objective);
+    return { ...this.sides(answer, value, this.payloadOf(answer)), searchedUpTo: end };
   }
 
   smallest(answer: TwoSided, searchedDownTo: number): DownwardAnswer {
     const payload = this.payloadParameter();
+    const end = inUnit(payload, searchedDownTo);
     const value = (objective: number): number =>
-      objective >= payload.nominal - searchedDownTo ? searchedDownTo : payload.nominal - objective;
-    return {
-      ...this.sides(answer, (objective) => inUnitUp(payload, value(objective)), this.payloadOf(answer)),
-      searchedDownTo: inUnit(payload, searchedDownTo),
-    };
+      objective >= payload.nominal - searchedDownTo ? end : inUnitUp(payload, payload.nominal - objective);
+    return { ...this.sides(answer, value, this.payloadOf(answer)), searchedDownTo: end };
   }
 
   stretch(answer: TwoSided, searchedUpTo: number): UpwardAnswer {

@@ -1,9 +1,12 @@
 import { type ChildProcess, spawn } from 'node:child_process';
+import { rmSync, statSync } from 'node:fs';
 import { createServer, type Server } from 'node:http';
 import type { AddressInfo } from 'node:net';
+import { join } from 'node:path';
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { freshBundle } from '../../../server/commands/bootstrap/bundle.mjs';
 import { installPackages } from '../../../server/commands/bootstrap/packages.mjs';
+import { foreignSignInFile } from '../../../server/commands/start/prepare-database';
 import { packageRoot } from '../../../server/platform/package-root';
 import { HttpClient } from '../support/http-client';
 import { createTestDatabase, type TestDatabase } from '../support/test-database';
@@ -11,6 +14,7 @@ import { createTestDatabase, type TestDatabase } from '../support/test-database'
 let bundle: string;
 beforeAll(async () => {
   const digest = await installPackages(packageRoot);
+  await freshBundle(packageRoot, 'engine-worker', 'server/jobs/worker/engine-worker.ts', digest, 'inside');
   bundle = await freshBundle(packageRoot, 'start', 'server/commands/start.ts', digest, 'outside');
 });
 
@@ -35,7 +39,7 @@ class Start {
 
   constructor(environment: Record<string, string>) {
     this.process = spawn(process.execPath, [bundle], {
-      env: { PATH: process.env.PATH, PORT: '0', ...environment },
+      env: { PATH: process.env.PATH, PORT: '0', ADMINISTRATOR_EMAIL: 'ada@example.com', ...environment },
       stdio: ['ignore', 'pipe', 'pipe'],
     });
     this.process.stdout?.on('data', (chunk: Buffer) => (this.output += chunk.toString()));
@@ -111,6 +115,44 @@ describe('the start command with a foreign database', () => {
     for (const url of [testDatabase.url, testDatabase.ownerUrl]) {
       expect(output + errors).not.toContain(new URL(url).password);
     }
+  });
+});
+
+describe('what the start command prints for an empty database', () => {
+  const printed = async (environment: Record<string, string>): Promise<string> => {
+    const command = start({ ...onTwoRoles(), ...environment });
+    await command.address();
+    command.process.kill('SIGTERM');
+    return (await command.ended).output;
+  };
+
+  it('is the sign-ins of the demo, the same at every start, kept for the present user alone', async () => {
+    const file = foreignSignInFile(join(packageRoot, '.data'), testDatabase.url);
+    try {
+      const demo = { ADMINISTRATOR_EMAIL: '' };
+      const lines = (output: string) => output.trim().split('\n').slice(1);
+      const first = lines(await printed(demo));
+      expect(first).toHaveLength(5);
+      expect(first[0]).toMatch(/^maren@quernholm\.example {2}(?:[a-z]{4}-){4}[a-z]{4} {2}administrator$/);
+      expect(statSync(file).mode & 0o777).toBe(0o600);
+      expect(lines(await printed(demo))).toEqual(first);
+    } finally {
+      rmSync(file, { force: true });
+    }
+  });
+
+  it('is a link for the first administrator where other machines reach the server, and never in the log', async () => {
+    const command = start({
+      ...onTwoRoles(),
+      ...{ ADMINISTRATOR_EMAIL: '', PUBLIC_ORIGIN: 'https://tareline.example', LOG_LEVEL: 'debug' },
+    });
+    await command.address();
+    command.process.kill('SIGTERM');
+    const { output, errors } = await command.ended;
+    expect(output).toContain('administrator@tareline.example');
+    const [, token] = /^https:\/\/tareline\.example\/invitation\/([\w-]{43})$/m.exec(output) ?? [];
+    expect(token).toBeDefined();
+    expect(errors).not.toContain(token);
   });
 });
 

@@ -93,7 +93,7 @@ export class DirectMargins {
       for (let i = 0; i < poles.re.length; i++) {
         const size = Math.hypot(poles.re[i], poles.im[i]);
         // A multiple pole at 0 comes out as several small ones.
-        if (size < 1e-6 * most) continue;
+        if (size < 1e-7 * most) continue;
         least = Math.min(least, size);
         if (poles.im[i] < 0) continue;
         const width = Math.max(Math.abs(poles.re[i]), 1e-9 * size);

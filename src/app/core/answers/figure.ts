@@ -46,7 +46,16 @@ export function plainFigure(value: number): string {
   const size = Math.abs(rounded);
   if (size !== 0 && (size >= 1e7 || size < 1e-4)) {
     const [digits, exponent] = rounded.toExponential().split('e');
-    return withMinus(`${digits}\u00a0×\u00a010^${Number(exponent)}`);
+    return withMinus(`${digits}\u00a0×\u00a010${superscript(Number(exponent))}`);
   }
   return withMinus(String(rounded));
+}
+
+const SUPERSCRIPTS: Record<string, string> = {
+  '-': '⁻',
+  ...Object.fromEntries([...'⁰¹²³⁴⁵⁶⁷⁸⁹'].map((sign, digit) => [String(digit), sign])),
+};
+
+function superscript(exponent: number): string {
+  return [...String(exponent)].map((sign) => SUPERSCRIPTS[sign] ?? sign).join('');
 }

@@ -25,5 +25,6 @@ export function refusalText(error: unknown): string {
   if (!(error instanceof Refusal)) return 'This did not work. Try again.';
   const { status, problem, failure } = error;
   if (status === 403) return 'You may not do this. Ask an administrator for the role.';
-  return problem !== undefined && status < 500 ? problem.detail : `${failure.title}. ${failure.detail}`;
+  const { title, detail } = problem !== undefined && status < 500 ? problem : failure;
+  return detail === '' ? `${title}.` : `${title}. ${detail}`;
 }

@@ -64,7 +64,12 @@ export class RunEvents {
       const open = (): void => {
         source = new EventSource(PATH);
         source.onopen = () => this.tell({ live: true });
-        source.onmessage = ({ data }: MessageEvent<string>) => this.tell({ event: JSON.parse(data) });
+        // Each kind of event comes under its own name.
+        for (const kind of runEventSchema.shape.kind.options) {
+          source.addEventListener(kind, ({ data }: MessageEvent<string>) =>
+            this.tell({ event: JSON.parse(data) }),
+          );
+        }
         source.onerror = () => {
           this.tell({ live: false });
           // Otherwise the browser connects again by itself and says which event it saw last.

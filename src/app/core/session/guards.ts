@@ -19,6 +19,16 @@ export const signedOut: CanActivateFn = async (route) => {
   return person === null || router.parseUrl(ownPath(route.queryParamMap.get('then')));
 };
 
+/** A page for everybody that still shows who is signed in, where that can be found out. */
+export const anybody: CanActivateFn = async () => {
+  try {
+    await inject(Session).restore();
+  } catch {
+    // The page needs nothing from the server.
+  }
+  return true;
+};
+
 /** Only then the route matches; the next route with the same path shows that the page is forbidden. */
 export const administrator: CanMatchFn = async () => {
   const session = inject(Session);

@@ -1,3 +1,3 @@
 export { sessionExpiry } from './expiry';
-export { administrator, ownPath, signedIn, signedOut } from './guards';
+export { administrator, anybody, ownPath, signedIn, signedOut } from './guards';
 export { Session } from './session';

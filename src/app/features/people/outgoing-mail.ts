@@ -25,7 +25,7 @@ const STATE_WORDS: Record<OutgoingMail['state'], string> = {
         <details>
           <summary>
             <span class="subject">{{ mail.subject }}</span>
-            <span class="second">to {{ mail.to }}</span>
+            <span class="second to">to {{ mail.to }}</span>
             <span class="state">{{ words[mail.state] }}</span>
             <span class="second"><app-moment [at]="mail.at" /></span>
           </summary>
@@ -73,6 +73,10 @@ const STATE_WORDS: Record<OutgoingMail['state'], string> = {
       summary {
         grid-template-columns: minmax(0, 1fr) auto;
         padding-inline: 1rem;
+      }
+      .to {
+        grid-column: 1 / -1;
+        grid-row: 2;
       }
     }
   `,

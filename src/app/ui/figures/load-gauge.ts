@@ -77,7 +77,7 @@ const TOP = 10;
         <text
           class="figure"
           text-anchor="middle"
-          [attr.transform]="'translate(100 ' + y((part.from + part.to) / 2) + ') rotate(-90)'"
+          [attr.transform]="'translate(108 ' + y((part.from + part.to) / 2) + ') rotate(-90)'"
         >
           rated
         </text>
@@ -87,7 +87,7 @@ const TOP = 10;
           class="mark"
           [class.sampled]="ranges().sampled"
           x1="38"
-          x2="104"
+          x2="94"
           [attr.y1]="y(mark)"
           [attr.y2]="y(mark)"
         />

@@ -66,7 +66,7 @@ describe('answersOf', () => {
       text: '2.53\u2009Hz, 15.9\u2009rad/s',
     });
     expect(answers.failingPoint).toEqual([
-      { label: 'Payload', text: '572.3\u2009kg, limit' },
+      { label: 'Payload', text: '572.4\u2009kg, limit' },
       { label: 'Belt stiffness', text: '120\u2009kN/m, low' },
     ]);
     expect(answers.tests).toEqual([{ at: 562.5, label: '1.25' }]);

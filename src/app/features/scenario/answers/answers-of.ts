@@ -62,8 +62,8 @@ export function answersOf(result: Result, study: Study, rated: Rated): Answers {
     figures: figuresOf(result, study, ranges, unit),
     facts: factsOf(result, limiting),
     tests: testsOf(result, study),
-    failingPoint: pointOf(study, limiting?.witness, study.payload),
-    insidePoint: pointOf(study, result.bands.witness, undefined),
+    failingPoint: pointOf(study, limiting?.witness, limiting === largest ? failsAbove : failsBelow),
+    insidePoint: pointOf(study, result.bands.witness),
   };
 }
 
@@ -189,19 +189,26 @@ function testsOf(result: Result, study: Study): GaugeTest[] {
   );
 }
 
-/** A point of the bands: each parameter with its value and whether that is an end of its band. */
+/**
+ * A point of the bands: each parameter with its value and whether that is an end of its band. At a limit of the
+ * payload that figure is rounded as the limit is.
+ */
 function pointOf(
   study: Study,
   witness: Record<string, number> | undefined,
-  limitId: string | undefined,
+  limitFigure?: (value: number) => string,
 ): Fact[] {
   if (witness === undefined) return [];
   return study.parameters.flatMap((parameter) => {
     const value = witness[parameter.id];
     if (value === undefined) return [];
-    const end = parameter.id === limitId ? 'limit' : endOf(parameter, value);
+    const label = parameter.label ?? parameter.id;
+    if (limitFigure !== undefined && parameter.id === study.payload) {
+      return [{ label, text: `${withUnit(limitFigure(value), parameter.unit)}, limit` }];
+    }
+    const end = endOf(parameter, value);
     const figure = withUnit(plainFigure(value), parameter.unit);
-    return [{ label: parameter.label ?? parameter.id, text: end === '' ? figure : `${figure}, ${end}` }];
+    return [{ label, text: end === '' ? figure : `${figure}, ${end}` }];
   });
 }
 
