@@ -1,5 +1,5 @@
 import { payloadFamily } from '../../shared/engine/contact/search-family';
-import type { BernsteinKernel } from '../../shared/engine/polynomial/bernstein-kernel';
+import { BernsteinKernel } from '../../shared/engine/polynomial/bernstein-kernel';
 import type { Example } from './examples';
 import { StudySearch } from './study-search';
 import { finish, median, timed } from './timing';
@@ -76,7 +76,8 @@ function proofsOf({ study }: Example): Pair[] {
   return study.requirements.flatMap((requirement) => {
     const polynomials = model.problem(requirement, searches.widest)?.polynomials;
     if (polynomials === undefined) return [];
-    const { kernel } = polynomials;
+    // Without cuts between the sheets: both sides then do the same work but for the radii.
+    const kernel = new BernsteinKernel({ ...polynomials.kernel.shape, cuts: undefined });
     const root = new Float64Array(kernel.length);
     polynomials.load(root, ranges);
     const plain = new UnguardedKernel(kernel.shape);

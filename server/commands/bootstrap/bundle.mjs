@@ -36,7 +36,6 @@ async function build(root, entry, packages) {
       // The module form of a package can be stripped of what is not used; its CommonJS form cannot.
       mainFields: ['module', 'main'],
       minifySyntax: true,
-      minifyWhitespace: true,
       legalComments: 'none',
       logLevel: 'silent',
     });

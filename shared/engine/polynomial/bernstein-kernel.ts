@@ -76,13 +76,6 @@ export class BernsteinKernel {
     return this.excludesZero(box) || this.excludesHalves(box, 0, this.nodes.length - 1);
   }
 
-  /** The same without error radii: for measuring what they cost, never for a proof. */
-  excludesUnguarded(box: Float64Array): boolean {
-    const copy = box.slice();
-    copy.fill(0, this.radiusOffset(0));
-    return this.excludes(copy);
-  }
-
   private excludesZero(box: Float64Array): boolean {
     const { size, columns } = this;
     let leftX = box[0];

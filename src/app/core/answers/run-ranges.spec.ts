@@ -39,14 +39,14 @@ describe('rangesOfRun', () => {
 });
 
 describe('reserveOf', () => {
-  it('is the distance at the heavy end where nothing fails at the light one', () => {
+  it('is the distance at the heavy end where the light end is proved from 0 on', () => {
     expect(reserveOf({ rated: { low: 40, high: 480 }, proved: { low: 0, high: 571 } })).toBe(91);
   });
 
   it('is the smaller of both ends', () => {
     const rated = { low: 40, high: 480 };
     expect(reserveOf({ rated, proved: { low: 85, high: 497 }, failsBelow: 84, failsAbove: 498 })).toBe(-45);
-    expect(reserveOf({ rated, proved: { low: 38, high: 600 }, failsBelow: 37 })).toBe(2);
+    expect(reserveOf({ rated, proved: { low: 38, high: 600 } })).toBe(2);
   });
 
   it('is open where nothing is rated or proved', () => {

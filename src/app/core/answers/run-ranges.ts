@@ -24,13 +24,13 @@ function mustFailBelow(rated: PayloadRanges['rated'], proved: PayloadRanges['pro
 
 /**
  * The smaller of the distances from both ends of the rated range to the ends of the proved one; negative where the
- * rated range reaches beyond. The light end counts where something fails below it or it is not covered.
+ * rated range reaches beyond. A proved range from 0 on has nothing to lose at its light end.
  */
-export function reserveOf({ rated, proved, failsBelow: below }: PayloadRanges): number | undefined {
+export function reserveOf({ rated, proved }: PayloadRanges): number | undefined {
   if (rated === undefined || proved === undefined) return undefined;
   const heavy = proved.high - rated.high;
   const light = rated.low - proved.low;
-  return below !== undefined || light < 0 ? Math.min(heavy, light) : heavy;
+  return proved.low > 0 ? Math.min(heavy, light) : heavy;
 }
 
 /** "0–571", rounded into the proved range. */

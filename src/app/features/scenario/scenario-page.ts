@@ -5,6 +5,7 @@ import { ActivatedRoute, Router } from '@angular/router';
 import { firstValueFrom, map } from 'rxjs';
 import { studySchema } from '../../../../shared/contracts';
 import {
+  listedRevisionSchema,
   runSchema,
   scenarioRevisionSchema,
   scenarioSchema,
@@ -56,7 +57,7 @@ export class ScenarioPage {
   protected readonly scenario = loaded(() => this.path(), scenarioSchema, 'this scenario');
   protected readonly revisions = loaded(
     () => `${this.path()}/revisions`,
-    listOf(scenarioRevisionSchema),
+    listOf(listedRevisionSchema),
     'the revisions of this scenario',
   );
   protected readonly older = loaded(

@@ -1,6 +1,6 @@
 import { ChangeDetectionStrategy, Component, input } from '@angular/core';
 import { RouterLink } from '@angular/router';
-import type { ScenarioRevision } from '../../../../../shared/contracts/api';
+import type { ListedRevision } from '../../../../../shared/contracts/api';
 import { RUN_STATE_WORDS, verdictOf, verdictWords } from '../../../core/answers';
 import { MomentView } from '../../../core/words';
 
@@ -51,11 +51,11 @@ import { MomentView } from '../../../core/words';
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class RevisionList {
-  readonly revisions = input.required<readonly ScenarioRevision[]>();
+  readonly revisions = input.required<readonly ListedRevision[]>();
   readonly shown = input.required<number>();
   readonly head = input.required<number>();
 
-  protected answer({ run }: ScenarioRevision): string {
+  protected answer({ run }: ListedRevision): string {
     const verdict = verdictOf(run);
     if (verdict !== undefined) return verdictWords(verdict);
     return run === null ? 'Not run yet' : RUN_STATE_WORDS[run.state];
