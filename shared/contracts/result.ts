@@ -1,4 +1,4 @@
-import { z } from './zod';
+import * as z from './zod';
 import { MAP_MEASURES, MAP_OTHERS } from './map';
 import { MEASURES } from './requirement';
 

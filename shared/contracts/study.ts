@@ -1,4 +1,4 @@
-import { z } from './zod';
+import * as z from './zod';
 import { controlSchema } from './control';
 import { actuatorsSchema, samplingSchema, sensorSchema } from './hardware';
 import { machineSchema } from './machine';

@@ -17,7 +17,7 @@ import {
   signedInSchema,
   variantSchema,
 } from '../../shared/contracts/api';
-import { z } from '../../shared/contracts/zod';
+import * as z from '../../shared/contracts/zod';
 import { ENGINE_VERSION } from '../../shared/engine';
 import { analyseText } from '../commands/support/run-in-process';
 import { memoryLog } from './support/memory-log';

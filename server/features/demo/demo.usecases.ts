@@ -1,9 +1,10 @@
 import { recordInAudit, type Seed, type Tx } from '../../db';
+import { readArrivingStudy } from '../../platform/arriving-study';
 import { createPasswords, type Passwords } from '../auth';
 import { insertPerson } from '../people';
 import { createProduct, setMember } from '../products';
 import { requestRun } from '../runs';
-import { addScenario, readArrivingStudy } from '../scenarios';
+import { addScenario } from '../scenarios';
 import { createVariant } from '../variants';
 import { nameOrganisation, selectRevisions } from './demo.repository';
 import { type DemoProduct, type DemoVariant, range } from './range';

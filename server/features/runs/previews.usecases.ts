@@ -1,7 +1,7 @@
 import { canonicalJson, type Result, type Warning } from '../../../shared/contracts';
 import type { Db } from '../../db';
 import { defineRoutine, type Engine, type MapGrid } from '../../jobs';
-import { type ArrivingStudy, asProblem, readArrivingStudy, sha256 } from './arriving-study';
+import { type ArrivingStudy, asProblem, readArrivingStudy, sha256 } from '../../platform/arriving-study';
 import type { PreviewClaim, PreviewSlots } from './preview-slots';
 import { findKept, forgetUnused, keepAnswer } from './previews.repository';
 

@@ -1,14 +1,14 @@
 import type { Tx } from '../../db';
 import { insertRevision } from './revisions.repository';
 import { insertScenario } from './scenarios.repository';
-import type { StoredStudy } from './stored-study';
+import type { ArrivingStudy } from '../../platform/arriving-study';
 import { toleranceSet, variantDescription } from './study-parts';
 import { appendVariantRevision, findRevisionLike } from './variant-revisions.repository';
 
 export interface NewScenario {
   readonly variantId: string;
   readonly name: string;
-  readonly stored: StoredStudy;
+  readonly stored: ArrivingStudy;
   readonly authorId: string;
 }
 
@@ -16,7 +16,7 @@ export interface NextRevision {
   readonly scenarioId: string;
   readonly variantId: string;
   readonly number: number;
-  readonly stored: StoredStudy;
+  readonly stored: ArrivingStudy;
   readonly note: string;
   readonly authorId: string;
 }

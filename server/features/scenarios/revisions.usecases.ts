@@ -7,7 +7,7 @@ import { revisionView, listedRevision } from './scenario-views';
 import { noRevision, noScenario, scenarioChanged } from './scenarios.errors';
 import { findScenario, lockVariantOf } from './scenarios.repository';
 import type { Actor, ScenarioDependencies } from './scenarios.usecases';
-import { readArrivingStudy } from './stored-study';
+import { readArrivingStudy } from '../../platform/arriving-study';
 
 /** The revisions of a scenario, newest first. */
 export async function readRevisions(

@@ -14,7 +14,7 @@ import {
   lockVariantOf,
   renameScenario,
 } from './scenarios.repository';
-import { readArrivingStudy } from './stored-study';
+import { readArrivingStudy } from '../../platform/arriving-study';
 import type { SummariesOf } from './summaries';
 
 export interface ScenarioDependencies {

@@ -6,9 +6,9 @@ import {
   archiveScenariosOf,
   listUsedScenarios,
   lockVariant,
-  readArrivingStudy,
   type SummariesOf,
 } from '../scenarios';
+import { readArrivingStudy } from '../../platform/arriving-study';
 import { duplicate } from './duplicate-variant';
 import { viewVariants } from './variant-views';
 import { noProduct, noVariant, variantInUse, variantNameTaken } from './variants.errors';

@@ -1,13 +1,12 @@
 import { createHash } from 'node:crypto';
 import { performance } from 'node:perf_hooks';
 import { canonicalText, readStudy, type Result } from '../../../shared/contracts';
-import { analyseInSteps, composeStudy, ENGINE_VERSION } from '../../../shared/engine';
+import { analyseInSteps, composeStudy, ENGINE_VERSION, MapCourse } from '../../../shared/engine';
 import type { AnalysisAnswer } from '../engine-task';
 import { flattenMap } from '../flat-map';
 import type { RunControl } from '../run-control';
 import { driveCourse } from './course';
 import { figuresOf } from './figures';
-import { MapCourse } from './map-course';
 
 /** Nobody knows how many steps a search takes; after this many an analysis is shown as half done. */
 const HALF_DONE = 4000;

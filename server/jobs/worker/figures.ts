@@ -1,7 +1,6 @@
 import type { Result, Scalar, Study } from '../../../shared/contracts';
 import type { RunFigures } from '../../../shared/contracts/api';
-import type { ComposedStudy } from '../../../shared/engine';
-import { inUnit } from '../../../shared/engine/analysis/in-units';
+import { type ComposedStudy, inUnit } from '../../../shared/engine';
 
 interface RatedRange {
   readonly unit: string | null;

@@ -1,9 +1,8 @@
 import { readStudy, StudyFaultError } from '../../../shared/contracts';
-import { composeStudy } from '../../../shared/engine';
+import { composeStudy, MapCourse } from '../../../shared/engine';
 import type { MapGrid } from '../engine-task';
 import type { RunControl } from '../run-control';
 import { driveCourse } from './course';
-import { MapCourse } from './map-course';
 import { finestUntil } from './finest-grid';
 
 /**

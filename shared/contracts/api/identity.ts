@@ -1,4 +1,4 @@
-import { z } from '../zod';
+import * as z from '../zod';
 
 export const idSchema = z.uuid({ error: 'must be an id' });
 /** An instant as ISO 8601 text in UTC. */

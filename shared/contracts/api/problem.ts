@@ -1,4 +1,4 @@
-import { z } from '../zod';
+import * as z from '../zod';
 
 /** An error of the API: problem details of RFC 9457 with a stable `code`. */
 export const problemSchema = z.object({

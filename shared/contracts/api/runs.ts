@@ -1,4 +1,4 @@
-import { z } from '../zod';
+import * as z from '../zod';
 import { mapAnswerSchema, resultSchema } from '../result';
 import { idSchema, instantSchema } from './identity';
 

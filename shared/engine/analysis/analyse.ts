@@ -1,7 +1,6 @@
 import {
   type BandsAnswer,
   type DelayAnswer,
-  type MapAnswer,
   type RatingAnswer,
   type Result,
   StudyFaultError,
@@ -12,12 +11,13 @@ import type { Contact, TwoSided } from '../contact/contact';
 import { limitingFrequency } from '../contact/requirement-value';
 import { evaluateExactly } from '../polynomial/exact-point';
 import type { ComposedRequirement, ComposedStudy } from '../study';
-import { sweepMap } from '../sweep/sweep-map';
 import { AnswerSearch, LARGEST_STRETCH } from './answer-search';
 import { delayAnswer } from './delay-answer';
 import { ENGINE_VERSION } from './engine-version';
 import { inUnit, snapToUnits } from './in-units';
 import { LoopModel } from './loop-model';
+import { mapInSteps } from './map-course';
+import { marginLaw } from './margin-law';
 import { nominalAnswer } from './nominal-answer';
 import { type RatedLimit, ratingAnswer } from './rating-answer';
 import { type SearchSpace, searchSpace } from './search-variables';
@@ -97,9 +97,7 @@ class Analysis {
     const start = options.clock();
     const law = marginLaw(study);
     const search = this.searchFor(study.requirements);
-    const stability = this.searchFor([{ measure: 'stability', limit: 0, law }]);
-    const stable = stability.proved ? stability.nominalContact() === undefined : undefined;
-    const nominal = nominalAnswer(this.model.probe(law), space.nominal, stable, this.polesAtOrigin(law));
+    const nominal = nominalAnswer(this.model, space, law);
     if (nominal === undefined) {
       throw new StudyFaultError([
         {
@@ -124,7 +122,10 @@ class Analysis {
     const largestPayload = largest && format.largest(largest, this.searchedUpTo);
     const rating = largestPayload && (yield* this.rating(largestPayload));
     const delay = this.delay(largest ?? stretch, nominal.phaseMargin);
-    const map = options.map && study.map !== undefined ? yield* this.map(nominal.decayRate ?? 0) : undefined;
+    const map =
+      options.map && study.map !== undefined
+        ? yield* mapInSteps(study, study.map, nominal.decayRate ?? 0)
+        : undefined;
     return {
       format: 'tareline-result',
       version: 1,
@@ -141,15 +142,6 @@ class Analysis {
       ...(study.warnings.length > 0 && { warnings: [...study.warnings] }),
       work: { boxes: this.work.boxes, milliseconds: options.clock() - start },
     };
-  }
-
-  /** Exactly: the power of s that divides the characteristic polynomial at the nominal point. */
-  private polesAtOrigin(law: number): number {
-    const polynomial = this.model.polynomial(law);
-    if (polynomial === undefined) return 0;
-    const { broken, returned } = evaluateExactly(polynomial, this.space.nominal);
-    const first = broken.findIndex((value, k) => value + returned[k] !== 0n);
-    return Math.max(0, first);
   }
 
   private searchFor(requirements: readonly ComposedRequirement[]): AnswerSearch {
@@ -223,19 +215,6 @@ class Analysis {
     return delayAnswer(this.model.loop, law, parameters, frequency);
   }
 
-  private *map(nominalDecayRate: number): Generator<void, MapAnswer | undefined> {
-    const { map, parameters } = this.study;
-    if (map === undefined) return undefined;
-    const { x, y, values } = yield* sweepMap(this.study, map, nominalDecayRate);
-    return {
-      x: x.map((value) => inUnit(parameters[map.x], value)),
-      y: y.map((value) => inUnit(parameters[map.y], value)),
-      measure: map.measure,
-      ...(map.others === 'anywhere' && { others: map.others, proof: 'sampled' as const }),
-      values,
-    };
-  }
-
   /** 0, or nominal/1000 where the loop loses its order there: a mass matrix that is singular without a payload. */
   private defaultLowerEnd(): number {
     const { space, searchedDownTo } = this;
@@ -252,9 +231,4 @@ class Analysis {
     const last = broken.length - 1;
     return broken[last] + returned[last] === 0n ? space.nominal[space.payload] / 1000 : searchedDownTo;
   }
-}
-
-/** The law at which the nominal margins are read: the first. */
-function marginLaw(study: ComposedStudy): number {
-  return study.loop.laws.length > 0 ? 0 : -1;
 }

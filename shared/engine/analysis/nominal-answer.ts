@@ -1,27 +1,28 @@
 import type { NominalAnswer } from '../../contracts';
 import type { LoopProbe } from '../contact/loop-probe';
 import { sortPoles } from '../linalg';
+import { exactStability } from '../polynomial/exact-stability';
+import type { LoopModel } from './loop-model';
+import type { SearchSpace } from './search-variables';
 
 /**
- * The closed loop at the nominal point.
- * @param stable what an exact count of poles says; undefined where there is none
- * @param atOrigin how many poles lie exactly at 0, as the exact coefficients tell
+ * The closed loop at the nominal point, with margins at one law; undefined where it has no proper form there.
+ * @param law index of the law, −1 without one
  */
-export function nominalAnswer(
-  probe: LoopProbe,
-  nominal: ArrayLike<number>,
-  stable: boolean | undefined,
-  atOrigin: number,
-): NominalAnswer | undefined {
+export function nominalAnswer(model: LoopModel, space: SearchSpace, law: number): NominalAnswer | undefined {
+  const { nominal } = space;
+  const probe = model.probe(law);
+  const polynomial = model.polynomial(law);
+  const exact = polynomial && exactStability(polynomial, nominal);
   probe.visit(nominal);
-  if (probe.regular) moveToOrigin(probe.poles, atOrigin);
+  if (probe.regular) moveToOrigin(probe.poles, exact?.atOrigin ?? 0);
   const measures = probe.withMargins();
   if (measures === undefined) return undefined;
   const { order, closedRe, closedIm } = probe.poles;
   const re = closedRe.slice(0, order);
   const im = closedIm.slice(0, order);
   sortPoles(re, im, order);
-  if (stable !== undefined) measures.stable = stable;
+  if (exact !== undefined) measures.stable = exact.stable;
   const values = measures.values();
   return {
     stable: values.stable,

@@ -60,7 +60,8 @@ export function* contactSearch(
       context.work.boxes += budget.boxes - before;
       if (outcome.kind === 'contact') {
         contact = improved(context, family, problem, outcome.point, contact);
-        if (contact.objective <= 0) return { provedTo: undefined, contact, openShare: undefined, openMeasure: undefined };
+        if (contact.objective <= 0)
+          return { provedTo: undefined, contact, openShare: undefined, openMeasure: undefined };
         continue;
       }
       if (outcome.kind === 'proved' && aim >= Math.max(0, clip)) {

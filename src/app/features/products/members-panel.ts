@@ -1,5 +1,5 @@
 import { ChangeDetectionStrategy, Component, computed, inject, input } from '@angular/core';
-import { z } from '../../../../shared/contracts/zod';
+import * as z from '../../../../shared/contracts/zod';
 import { memberSchema, PRODUCT_ROLES, type Member, type ProductRole } from '../../../../shared/contracts/api';
 import { ROLE_WORDS } from '../../core/answers';
 import { Api, listOf, loaded } from '../../core/api';

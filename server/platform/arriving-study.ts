@@ -6,16 +6,17 @@ import {
   type Study,
   StudyFaultError,
   type Warning,
-} from '../../../shared/contracts';
-import { studyUnusable } from '../../platform/problem';
+} from '../../shared/contracts';
+import { studyUnusable } from './problem';
 
-/** A study that came to be computed and not kept. */
+/** A study that came in a request: its one text, and what identifies it and its answers. */
 export interface ArrivingStudy {
   readonly study: Study;
   /** Canonical. */
   readonly text: string;
+  /** `sha256:` and the hash of the canonical text, as results state it. */
   readonly hash: string;
-  /** Of what the answers depend on. */
+  /** The same of what the answers depend on. */
   readonly answerHash: string;
   readonly warnings: readonly Warning[];
 }
