@@ -42,6 +42,16 @@ export default defineConfig({
       },
       {
         extends: true,
+        test: {
+          name: 'e2e',
+          include: ['tests/e2e/**/*.spec.ts'],
+          globalSetup: ['tests/e2e/support/set-up.ts', 'tests/api/support/cluster-setup.ts'],
+          testTimeout: 60_000,
+          hookTimeout: 60_000,
+        },
+      },
+      {
+        extends: true,
         test: { name: 'commands', include: ['tests/commands/**/*.spec.ts'], testTimeout: 60_000 },
       },
       {

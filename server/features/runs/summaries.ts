@@ -5,7 +5,7 @@ import { runs } from '../../db/schema';
 
 const NO_FIGURES: RunFigures = {
   ...{ unit: null, verdict: null, proof: null, approximated: false },
-  ...{ ratedLow: null, ratedHigh: null, provedLow: null, provedHigh: null, failsAt: null },
+  ...{ ratedLow: null, ratedHigh: null, provedLow: null, provedHigh: null, failsAt: null, failsBelow: null },
   ...{ plate: null, limiting: null },
 };
 

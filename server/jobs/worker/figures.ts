@@ -36,6 +36,8 @@ export function figuresOf(study: Study, composed: ComposedStudy, result: Result)
     provedLow: smallestPayload?.provedTo ?? null,
     provedHigh: largestPayload?.provedTo ?? null,
     failsAt: largestPayload?.failsAt ?? null,
+    // Where nothing is proved, the failing point is the nominal one: it stands at the heavy end already.
+    failsBelow: largestPayload?.provedTo == null ? null : (smallestPayload?.failsAt ?? null),
     plate: rating?.plate ?? null,
     limiting: largestPayload?.requirement ?? bands.requirement ?? bandStretch?.requirement ?? null,
   };

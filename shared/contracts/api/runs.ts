@@ -16,7 +16,10 @@ export const runFiguresSchema = z.object({
   ratedHigh: z.number().nullable(),
   provedLow: z.number().nullable(),
   provedHigh: z.number().nullable(),
+  /** Payload of the failing point beyond the heavy end. */
   failsAt: z.number().nullable(),
+  /** The same beyond the light end. */
+  failsBelow: z.number().nullable(),
   plate: z.number().nullable(),
   limiting: z.string().nullable(),
 });

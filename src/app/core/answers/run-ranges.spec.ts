@@ -15,6 +15,7 @@ const run: RunSummary = {
   provedLow: 0,
   provedHigh: 571.26,
   failsAt: 572.31,
+  failsBelow: null,
   plate: 450,
   limiting: 'dampingRatio',
 };
@@ -25,16 +26,11 @@ describe('rangesOfRun', () => {
     expect(rangesOfRun({ ...run, state: 'queued', verdict: null })).toBeUndefined();
   });
 
-  it('concludes that the light end fails where the heavy end is proved', () => {
+  it('shows the failing points beyond both ends', () => {
     expect(rangesOfRun(run)).toMatchObject({ failsAbove: 572.31, failsBelow: undefined });
-    const light = rangesOfRun({ ...run, verdict: 'fails', provedLow: 85 });
-    expect(light).toMatchObject({ failsAbove: 572.31, failsBelow: 'somewhere' });
-    expect(rangesInWords(light ?? {}, 'kg')).toContain('fails below that');
-  });
-
-  it('concludes nothing of the light end where the heavy end fails as well', () => {
-    const both = rangesOfRun({ ...run, verdict: 'fails', provedLow: 85, provedHigh: 470 });
-    expect(both?.failsBelow).toBeUndefined();
+    const light = rangesOfRun({ ...run, verdict: 'fails', provedLow: 85, failsBelow: 84.92 });
+    expect(light).toMatchObject({ failsAbove: 572.31, failsBelow: 84.92 });
+    expect(rangesInWords(light ?? {}, 'kg')).toContain('fails at 84.9');
   });
 });
 

@@ -5,21 +5,16 @@ import { failsAbove, failsBelow, provedFrom, provedTo, withUnit } from './figure
 /** What the pictures show of a run; undefined while there is no answer. */
 export function rangesOfRun(run: RunSummary | null): PayloadRanges | undefined {
   if (run === null || run.verdict === null) return undefined;
-  const { ratedLow, ratedHigh, provedLow, provedHigh, failsAt } = run;
+  const { ratedLow, ratedHigh, provedLow, provedHigh } = run;
   const rated = ratedLow === null || ratedHigh === null ? undefined : { low: ratedLow, high: ratedHigh };
   const proved = provedLow === null || provedHigh === null ? undefined : { low: provedLow, high: provedHigh };
   return {
     rated,
     proved,
-    failsBelow: run.verdict === 'fails' && mustFailBelow(rated, proved) ? 'somewhere' : undefined,
-    failsAbove: failsAt ?? undefined,
+    failsBelow: run.failsBelow ?? undefined,
+    failsAbove: run.failsAt ?? undefined,
     sampled: run.proof === 'sampled',
   };
-}
-
-/** Where the rated range fails and its heavy end is proved, what fails lies below the proved range. */
-function mustFailBelow(rated: PayloadRanges['rated'], proved: PayloadRanges['proved']): boolean {
-  return rated !== undefined && proved !== undefined && rated.low < proved.low && rated.high <= proved.high;
 }
 
 /**
@@ -47,9 +42,7 @@ export function rangesInWords(ranges: PayloadRanges, unit: string | null): strin
       ? 'Nothing proved'
       : `${word} ${provedFrom(proved.low)} to ${withUnit(provedTo(proved.high), unit)}`,
     ...(rated === undefined ? [] : [`rated ${rated.low} to ${withUnit(String(rated.high), unit)}`]),
-    ...(below === undefined
-      ? []
-      : [below === 'somewhere' ? 'fails below that' : `fails at ${withUnit(failsBelow(below), unit)}`]),
+    ...(below === undefined ? [] : [`fails at ${withUnit(failsBelow(below), unit)}`]),
     ...(above === undefined ? [] : [`fails at ${withUnit(failsAbove(above), unit)}`]),
   ];
   return `${parts.join('; ')}.`;

@@ -2,8 +2,8 @@
 export interface PayloadRanges {
   readonly rated?: { readonly low: number; readonly high: number } | undefined;
   readonly proved?: { readonly low: number; readonly high: number } | undefined;
-  /** Where a failing point was found beyond the ends of the proved range; `somewhere`: there is one, its place is not at hand. */
-  readonly failsBelow?: number | 'somewhere' | undefined;
+  /** Where a failing point was found beyond the ends of the proved range. */
+  readonly failsBelow?: number | undefined;
   readonly failsAbove?: number | undefined;
   /** Not proved but sampled: drawn with a dotted edge. */
   readonly sampled?: boolean | undefined;
@@ -40,9 +40,7 @@ export function layOutRanges(ranges: PayloadRanges, end: number): RangeLayout {
       ? beyond(stretch(0, end), failsAbove !== undefined)
       : beyond(stretch(proved.high, end), failsAbove !== undefined);
   const marks = [
-    ...(failsBelow === undefined
-      ? []
-      : [share(proved?.low ?? (failsBelow === 'somewhere' ? 0 : failsBelow))]),
+    ...(failsBelow === undefined ? [] : [share(proved?.low ?? failsBelow)]),
     ...(failsAbove === undefined ? [] : [share(proved?.high ?? failsAbove)]),
   ];
   return {

@@ -112,7 +112,7 @@ function convertRanges(
     ...ranges,
     rated: both(ranges.rated),
     proved: both(ranges.proved),
-    failsBelow: ranges.failsBelow === 'somewhere' ? 'somewhere' : one(ranges.failsBelow),
+    failsBelow: one(ranges.failsBelow),
     failsAbove: one(ranges.failsAbove),
   };
 }

@@ -24,6 +24,7 @@ function run(change: Partial<RunSummary>): RunSummary {
     provedLow: 0,
     provedHigh: 571.26,
     failsAt: 572.31,
+    failsBelow: null,
     plate: null,
     limiting: 'dampingRatio',
     ...change,
