@@ -15,7 +15,14 @@ const ANSWER: AnalysisAnswer = {
   result: '{"format":"tareline-result"}',
   figures: {
     ...{ unit: 'kg', verdict: 'holds', proof: 'proved', approximated: false, ratedLow: 0, ratedHigh: 480 },
-    ...{ provedLow: 0, provedHigh: 500.5, failsAt: 501, failsBelow: null, plate: null, limiting: 'stability' },
+    ...{
+      provedLow: 0,
+      provedHigh: 500.5,
+      failsAt: 501,
+      failsBelow: null,
+      plate: null,
+      limiting: 'stability',
+    },
   },
   map: undefined,
 };

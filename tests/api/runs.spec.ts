@@ -71,6 +71,7 @@ describe('runs', () => {
       provedLow: run.result?.smallestPayload?.provedTo,
       provedHigh: run.result?.largestPayload?.provedTo,
       failsAt: run.result?.largestPayload?.failsAt,
+      failsBelow: null,
       plate: run.result?.rating?.plate,
       limiting: 'dampingRatio',
     };

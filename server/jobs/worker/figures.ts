@@ -37,7 +37,7 @@ export function figuresOf(study: Study, composed: ComposedStudy, result: Result)
     provedHigh: largestPayload?.provedTo ?? null,
     failsAt: largestPayload?.failsAt ?? null,
     // Where nothing is proved, the failing point is the nominal one: it stands at the heavy end already.
-    failsBelow: largestPayload?.provedTo == null ? null : (smallestPayload?.failsAt ?? null),
+    failsBelow: typeof largestPayload?.provedTo === 'number' ? (smallestPayload?.failsAt ?? null) : null,
     plate: rating?.plate ?? null,
     limiting: largestPayload?.requirement ?? bands.requirement ?? bandStretch?.requirement ?? null,
   };
