@@ -76,3 +76,51 @@ describe('exclusion between two sheets', () => {
     );
   });
 });
+
+describe('exclusion of a disc in sectors', () => {
+  const shape = { degrees: [], degree: 2, sheets: 1, discRadius: 0.5 };
+
+  /** Coefficients of a and d along t. */
+  function pairOf(kernel: BernsteinKernel, a: readonly [number, number][], d: readonly [number, number][]) {
+    const box = new Float64Array(kernel.length);
+    a.forEach(([re, im], i) => {
+      box[i] = re;
+      box[kernel.size + i] = im;
+    });
+    d.forEach(([re, im], i) => {
+      box[2 * kernel.size + i] = re;
+      box[3 * kernel.size + i] = im;
+    });
+    return box;
+  }
+
+  it('succeeds where no one direction does for the whole disc', () => {
+    const kernel = new BernsteinKernel(shape);
+    // All a + Δd with abs(Δ) ≤ ½ stay off 0 for one and the same reason, but the discs around the a look all ways.
+    const a = [0, 50, 100].map((degrees) => turned([1, 0], degrees));
+    const d = [0, 50, 100].map((degrees) => turned([1.7, 0], degrees));
+    expect(kernel.excludes(pairOf(kernel, a, d))).toBe(true);
+    const off = [0, 50, 200].map((degrees) => turned([1, 0], degrees));
+    expect(kernel.excludes(pairOf(kernel, off, d))).toBe(false);
+  });
+
+  it('never excludes a box in which a touches its disc', () => {
+    const kernel = new BernsteinKernel(shape);
+    const value = fc.integer({ min: -20, max: 20 });
+    const curve = fc.array(fc.tuple(value, value), { minLength: 3, maxLength: 3 });
+    const share = fc.integer({ min: 0, max: 16 }).map((part) => part / 16);
+    const quarter = fc.constantFrom<[number, number]>([0.5, 0], [0, 0.5], [-0.5, 0], [0, -0.5]);
+    fc.assert(
+      fc.property(curve, curve, share, quarter, (a, d, t, [re, im]) => {
+        const weights = [(1 - t) * (1 - t), 2 * t * (1 - t), t * t];
+        const at = (points: readonly [number, number][], part: 0 | 1) =>
+          weights.reduce((sum, weight, k) => sum + weight * points[k][part], 0);
+        // a(t) = −Δ d(t) exactly, with abs(Δ) = β.
+        const [dx, dy] = [at(d, 0), at(d, 1)];
+        const shift: [number, number] = [-(re * dx - im * dy) - at(a, 0), -(re * dy + im * dx) - at(a, 1)];
+        const moved = a.map(([x, y]): [number, number] => [x + shift[0], y + shift[1]]);
+        expect(kernel.excludes(pairOf(kernel, moved, d))).toBe(false);
+      }),
+    );
+  });
+});

@@ -1,8 +1,11 @@
+import { cos, sin } from '../../expressions';
 import { UNIT_ROUNDOFF } from './rounding';
 import type { TensorShape } from './tensor-shape';
 
 /** More than a modulus can lose where the squares under its root fall below the smallest double: 2^−537. */
 const UNDERFLOWN_SQUARE = 1e-161;
+/** The disc of a modulus margin is cut into this many triangles where one direction does not do for all of it. */
+const SECTORS = 16;
 
 /**
  * Shows that a box keeps away from the boundary: its values lie in the convex hull of its Bernstein coefficients, so
@@ -16,6 +19,8 @@ export class ExclusionTest {
   private readonly isDisc: boolean;
   /** Ends of the pieces between the two sheets: 0, the cuts, 1. */
   private readonly nodes: readonly number[];
+  /** Corners of a regular polygon around the disc of radius β, the first one again at the end. */
+  private readonly corners: readonly { readonly re: number; readonly im: number }[];
   private cosine = 0;
   private sine = 0;
 
@@ -31,11 +36,17 @@ export class ExclusionTest {
     this.isDisc = discRadius !== undefined;
     this.beta = discRadius ?? 0;
     this.nodes = [0, ...(sheets === 2 ? (cuts ?? []) : []), 1];
+    // A little larger than the polygon itself, so that its rounded corners still hold the disc.
+    const reach = (this.beta / cos(Math.PI / SECTORS)) * (1 + 1e-12);
+    this.corners = Array.from({ length: SECTORS + 1 }, (_, i) => {
+      const angle = (2 * Math.PI * (i % SECTORS)) / SECTORS;
+      return { re: reach * cos(angle), im: reach * sin(angle) };
+    });
   }
 
   /** True when the whole box, laid out as in `BernsteinKernel`, is excluded; false proves nothing. */
   excludes(box: Float64Array): boolean {
-    if (this.isDisc) return this.excludesDisc(box);
+    if (this.isDisc) return this.excludesDisc(box) || this.excludesSectors(box);
     return this.excludesZero(box) || this.excludesHalves(box, 0, this.nodes.length - 1);
   }
 
@@ -190,6 +201,79 @@ export class ExclusionTest {
         const disc = beta * (modulus + box[radii + columns + k]) * (1 + 8 * UNIT_ROUNDOFF);
         const slack = box[radii + k] + 4 * UNIT_ROUNDOFF * (Math.abs(x) + Math.abs(y) + disc);
         if (!(x + y - disc > slack * (1 + 1e-6))) return false;
+      }
+    }
+    return true;
+  }
+
+  /**
+   * abs(a) > β abs(d) holds where a + Δd ≠ 0 for every abs(Δ) ≤ β. Cut into triangles with a corner at 0, the disc
+   * of Δ needs a direction for each triangle only: a + Δd is affine in Δ, so the values at its three corners carry
+   * the whole triangle.
+   */
+  private excludesSectors(box: Float64Array): boolean {
+    if (!this.keepsOffDisc(box)) return false;
+    for (let i = 0; i < SECTORS; i++) if (!this.excludesTriangle(box, i)) return false;
+    return true;
+  }
+
+  /** Whether every coefficient lies outside of its disc: without that no cut can help. */
+  private keepsOffDisc(box: Float64Array): boolean {
+    const { size, beta } = this;
+    const second = 2 * size;
+    for (let i = 0; i < size; i++) {
+      const a = box[i] * box[i] + box[size + i] * box[size + i];
+      const d = box[second + i] * box[second + i] + box[second + size + i] * box[second + size + i];
+      if (!(a > beta * beta * d)) return false;
+    }
+    return true;
+  }
+
+  private excludesTriangle(box: Float64Array, sector: number): boolean {
+    const { size, columns, corners } = this;
+    const second = 2 * size;
+    const from = corners[sector];
+    const to = corners[sector + 1];
+    let leftX = box[0];
+    let leftY = box[size];
+    let rightX = leftX;
+    let rightY = leftY;
+    for (let i = 0; i < size; i++) {
+      const dx = box[second + i];
+      const dy = box[second + size + i];
+      for (let corner = 0; corner < 3; corner++) {
+        const re = corner === 0 ? 0 : corner === 1 ? from.re : to.re;
+        const im = corner === 0 ? 0 : corner === 1 ? from.im : to.im;
+        const x = box[i] + (re * dx - im * dy);
+        const y = box[size + i] + (re * dy + im * dx);
+        const beyondRight = rightX * y - rightY * x < 0;
+        if (leftX * y - leftY * x > 0) {
+          if (beyondRight) return false;
+          leftX = x;
+          leftY = y;
+        } else if (beyondRight) {
+          rightX = x;
+          rightY = y;
+        }
+      }
+    }
+    if (!this.bisect(leftX, leftY, rightX, rightY)) return false;
+    const { cosine, sine } = this;
+    const reach = Math.max(Math.abs(from.re) + Math.abs(from.im), Math.abs(to.re) + Math.abs(to.im));
+    const radii = 4 * size;
+    for (let row = 0; row < size; row += columns) {
+      for (let k = 0; k < columns; k++) {
+        const i = row + k;
+        const dx = box[second + i];
+        const dy = box[second + size + i];
+        const sum = Math.abs(box[i]) + Math.abs(box[size + i]) + reach * (Math.abs(dx) + Math.abs(dy));
+        const radius = box[radii + k] + reach * box[radii + columns + k];
+        const slack = (radius + 8 * UNIT_ROUNDOFF * sum) * (1 + 1e-6);
+        // Along the direction: a's part, and what Δd adds at the two outer corners.
+        const a = cosine * box[i] + sine * box[size + i];
+        const first = a + (cosine * (from.re * dx - from.im * dy) + sine * (from.re * dy + from.im * dx));
+        const last = a + (cosine * (to.re * dx - to.im * dy) + sine * (to.re * dy + to.im * dx));
+        if (!(a > slack && first > slack && last > slack)) return false;
       }
     }
     return true;
