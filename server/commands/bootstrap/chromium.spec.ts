@@ -26,7 +26,9 @@ describe('installChromium', () => {
     installChromium({
       isRoot,
       run: (program, args) => {
-        commands.push([program, ...args.filter((word) => !word.startsWith('--') || args.length === 1)].join(' '));
+        commands.push(
+          [program, ...args.filter((word) => !word.startsWith('--') || args.length === 1)].join(' '),
+        );
         return { succeeded: works(commands[commands.length - 1]) };
       },
     });

@@ -18,17 +18,17 @@ import { Notices } from '../core/notices';
     .bar.open {
       position: fixed;
       z-index: 20;
-      bottom: 1rem;
-      left: 50%;
+      inset: auto 1rem 1rem;
       display: flex;
       align-items: baseline;
       gap: 1.25rem;
-      max-width: min(40rem, calc(100vw - 2rem));
+      width: fit-content;
+      max-width: 40rem;
+      margin-inline: auto;
       padding: 0.75rem 1rem;
       border-radius: var(--radius);
       background: var(--ink);
       color: var(--sheet);
-      transform: translateX(-50%);
     }
     p:empty {
       display: none;

@@ -1,4 +1,4 @@
-import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
+import { ChangeDetectionStrategy, Component, booleanAttribute, computed, input } from '@angular/core';
 import { momentText } from './moment';
 
 /** An instant in words, the exact one in its title. */
@@ -15,6 +15,12 @@ import { momentText } from './moment';
 export class MomentView {
   readonly at = input.required<string>();
 
-  protected readonly text = computed(() => momentText(this.at()));
+  /** It stands within a sentence: "today 12:04". */
+  readonly inSentence = input(false, { transform: booleanAttribute });
+
+  protected readonly text = computed(() => {
+    const text = momentText(this.at());
+    return this.inSentence() ? text.replace(/^(?:To|Yester)/, (start) => start.toLowerCase()) : text;
+  });
   protected readonly exact = computed(() => new Date(this.at()).toLocaleString('en-GB'));
 }

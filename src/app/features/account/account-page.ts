@@ -32,6 +32,11 @@ import { PasswordForm } from './password-form';
       max-width: 22rem;
       margin-top: 0.5rem;
     }
+    @media (max-width: 40rem) {
+      app-password-form {
+        max-width: none;
+      }
+    }
   `,
   changeDetection: ChangeDetectionStrategy.OnPush,
 })

@@ -71,7 +71,7 @@ const directoryEntrySchema = z.object({ id: z.string(), name: z.string(), email:
     }
     .who {
       display: grid;
-      flex: 1 1 14rem;
+      flex: 1 1 10rem;
       min-width: 0;
       overflow-wrap: anywhere;
     }

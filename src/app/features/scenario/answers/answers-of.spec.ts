@@ -86,7 +86,12 @@ describe('answersOf', () => {
   it('says where the search ended and what stays open', () => {
     const open = { provedTo: 2400, failsAt: null, searchedUpTo: 2400, proof: 'proved' as const };
     expect(change({ largestPayload: open })).toBe(
-      'Proved to 2400\u2009kg; the search ends there, and nothing heavier is known to fail.',
+      'Proved to 2400\u2009kg, where the search ends and nothing heavier is known to fail.',
+    );
+    const smallest = { provedTo: 52.38461, failsAt: 52.30461, searchedDownTo: 0, proof: 'proved' as const };
+    expect(change({ largestPayload: open, smallestPayload: smallest })).toBe(
+      'Proved from 52.39 to 2400\u2009kg, where the search ends and nothing heavier is known to fail; ' +
+        'fails at 52.3\u2009kg.',
     );
     expect(change({ largestPayload: { ...open, provedTo: 600, undecided: true } })).toContain(
       'beyond it neither proved nor refuted',

@@ -105,8 +105,8 @@ function sentenceOf(result: Result, unit: string | undefined, approximated: bool
   }
   const light = below.length === 0 ? '' : `; fails at ${withUnit(below[0], unit)}`;
   return largest.undecided
-    ? `${start}${light}; beyond it neither proved nor refuted.`
-    : `${start}${light}; the search ends there, and nothing heavier is known to fail.`;
+    ? `${start}, beyond it neither proved nor refuted${light}.`
+    : `${start}, where the search ends and nothing heavier is known to fail${light}.`;
 }
 
 function verdictSentence(result: Result, approximated: boolean): string {
