@@ -7,25 +7,22 @@ import {
   scenarioRevisionSchema,
   type ScenarioRevision,
 } from '../../../../../shared/contracts/api';
-import { Api, Refusal } from '../../../core/api';
+import { Api } from '../../../core/api';
 import { submission, validBy } from '../../../core/form';
-import { MomentView } from '../../../core/words';
 import { StudyChoice } from '../../../forms/study-choice';
 import { DialogFrame } from '../../../ui/dialog';
 import { TextField } from '../../../ui/form';
-import { studyChanges } from './study-changes';
+import { newerRevision, SavedMeanwhile } from './saved-meanwhile';
 
 export interface ImportStudyData {
   readonly scenarioId: string;
   readonly base: ScenarioRevision;
 }
 
-const MOST_CHANGES = 8;
-
 /** Saves a study file as the next revision. Where somebody saved meanwhile, shows what they changed first. */
 @Component({
   selector: 'app-import-study',
-  imports: [DialogFrame, MomentView, ReactiveFormsModule, StudyChoice, TextField],
+  imports: [DialogFrame, ReactiveFormsModule, SavedMeanwhile, StudyChoice, TextField],
   template: `
     <form class="form" [formGroup]="form" (ngSubmit)="save()" novalidate>
       <app-dialog-frame title="Import a study">
@@ -35,39 +32,13 @@ const MOST_CHANGES = 8;
         <app-study-choice [(study)]="study" />
         <app-text-field label="Note" hint="What changed, and why" [control]="form.controls.note" />
         @if (newer(); as newer) {
-          <div class="form-fault" role="alert">
-            <p>
-              {{ newer.author }} saved revision {{ newer.number }} meanwhile (<app-moment [at]="newer.at" />).
-              It changed:
-            </p>
-            <ul>
-              @for (change of changes(); track change.path) {
-                <li>
-                  <strong>{{ change.path }}</strong>: {{ change.before ?? 'nothing' }} →
-                  {{ change.after ?? 'nothing' }}
-                </li>
-              } @empty {
-                <li>nothing in the study</li>
-              }
-              @if (more() > 0) {
-                <li>and {{ more() }} more</li>
-              }
-            </ul>
-            <p>Both stay: yours becomes revision {{ newer.number + 1 }} if you save again.</p>
-          </div>
+          <app-saved-meanwhile [newer]="newer" [started]="started" [own]="study()" />
         }
         <button dialogActs type="submit" class="button main" [attr.aria-disabled]="submission.sending()">
           Save as revision {{ base().number + 1 }}
         </button>
       </app-dialog-frame>
     </form>
-  `,
-  styles: `
-    ul {
-      margin: 0.375rem 0;
-      font-weight: 400;
-      overflow-wrap: anywhere;
-    }
   `,
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
@@ -76,15 +47,11 @@ export class ImportStudy {
   private readonly dialog = inject<MatDialogRef<ImportStudy, ScenarioRevision>>(MatDialogRef);
   private readonly data = inject<ImportStudyData>(MAT_DIALOG_DATA);
 
+  /** What both sides began from. */
+  protected readonly started = this.data.base.study;
   protected readonly study = signal<Study | undefined>(undefined);
   protected readonly newer = signal<ScenarioRevision | undefined>(undefined);
   protected readonly base = computed(() => this.newer() ?? this.data.base);
-  private readonly allChanges = computed(() => {
-    const newer = this.newer();
-    return newer === undefined ? [] : studyChanges(this.data.base.study, newer.study);
-  });
-  protected readonly changes = computed(() => this.allChanges().slice(0, MOST_CHANGES));
-  protected readonly more = computed(() => this.allChanges().length - this.changes().length);
   protected readonly form = new FormGroup({
     note: new FormControl('', { nonNullable: true, validators: validBy(saveScenarioSchema.shape.note) }),
   });
@@ -108,11 +75,4 @@ export class ImportStudy {
       }
     });
   }
-}
-
-/** What somebody else saved, where that is why the save was refused. */
-function newerRevision(error: unknown): ScenarioRevision | undefined {
-  if (!(error instanceof Refusal) || error.status !== 409) return undefined;
-  const read = scenarioRevisionSchema.safeParse(error.problem?.current);
-  return read.success ? read.data : undefined;
 }
