@@ -1,4 +1,4 @@
-export { analyse, analyseInSteps, type AnalysisOptions } from './analysis/analyse';
+export { analyse, analyseInSteps, type AnalysisOptions, type AnswersSoFar } from './analysis/analyse';
 export { inUnit } from './analysis/in-units';
 export { MapCourse } from './analysis/map-course';
 export { ENGINE_VERSION } from './analysis/engine-version';

@@ -94,6 +94,12 @@ export const balancingCarrier: MachineTemplate = {
       hint: 'Viscous, against the tilting motion; 0 is the careful choice.',
     },
   ],
+  signals: {
+    x: { label: 'travel', unit: 'm' },
+    theta: { label: 'tilt', unit: 'rad' },
+    u: { label: 'wheel torque', unit: 'N m' },
+    tilt: { label: 'tilt', unit: 'rad' },
+  },
   machine: {
     coordinates: ['x', 'theta'],
     mass: [

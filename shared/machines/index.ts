@@ -1,2 +1,3 @@
-export type { MachineTemplate, TemplateParameter } from './template';
+export { drawingOf, type Drawing, type DrawingItem, type Point } from './drawings';
+export type { MachineTemplate, TemplateParameter, TemplateSignal } from './template';
 export { checkTemplateParameters, expandMachine, templateOf, templates } from './templates';

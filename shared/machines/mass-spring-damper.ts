@@ -53,6 +53,7 @@ export const massSpringDamper: MachineTemplate = {
       hint: 'Viscous damping between the carrying part and the ground.',
     },
   ],
+  signals: { q: { label: 'position', unit: 'm' }, u: { label: 'force', unit: 'N' } },
   machine: {
     coordinates: ['q'],
     mass: [['m0 + m']],

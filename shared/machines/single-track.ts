@@ -126,6 +126,11 @@ export const singleTrack: MachineTemplate = {
       hint: 'Both wheels of the axle together.',
     },
   ],
+  signals: {
+    vy: { label: 'lateral velocity', unit: 'm/s' },
+    r: { label: 'yaw rate', unit: 'rad/s' },
+    delta: { label: 'steering angle', unit: 'rad' },
+  },
   machine: {
     states: ['vy', 'r'],
     descriptor: [

@@ -77,6 +77,14 @@ export const suspendedCabin: MachineTemplate = {
       hint: 'Between unsprung part and road.',
     },
   ],
+  signals: {
+    zs: { label: 'cabin', unit: 'm' },
+    zu: { label: 'unsprung part', unit: 'm' },
+    f: { label: 'support force', unit: 'N' },
+    cabin: { label: 'cabin height', unit: 'm' },
+    stroke: { label: 'suspension stroke', unit: 'm' },
+    cabinVelocity: { label: 'cabin velocity', unit: 'm/s' },
+  },
   machine: {
     coordinates: ['zs', 'zu'],
     mass: [

@@ -16,6 +16,12 @@ export interface TemplateParameter {
   readonly hint: string;
 }
 
+/** What a coordinate, state, input or output of a template stands for. */
+export interface TemplateSignal {
+  readonly label: string;
+  readonly unit: string;
+}
+
 /** A machine that people choose by name. Its equations are written in the language of a custom machine. */
 export interface MachineTemplate {
   readonly id: TemplateId;
@@ -25,5 +31,7 @@ export interface MachineTemplate {
   readonly leavesOut: string;
   readonly source?: string;
   readonly parameters: readonly TemplateParameter[];
+  /** By the name of the coordinate, state, input or output. */
+  readonly signals: Readonly<Record<string, TemplateSignal>>;
   readonly machine: CustomMachine;
 }

@@ -77,6 +77,13 @@ export const twoMassDrive: MachineTemplate = {
       hint: 'Viscous friction between the drive and the ground; 0 is the careful choice.',
     },
   ],
+  signals: {
+    q1: { label: 'drive', unit: 'm' },
+    q2: { label: 'carriage', unit: 'm' },
+    u: { label: 'force on the drive', unit: 'N' },
+    drive: { label: 'drive position', unit: 'm' },
+    carriage: { label: 'carriage position', unit: 'm' },
+  },
   machine: {
     coordinates: ['q1', 'q2'],
     mass: [

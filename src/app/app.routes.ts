@@ -32,7 +32,7 @@ export const routes: Routes = [
       },
       {
         path: 'scenarios/:scenarioId',
-        loadComponent: () => import('./features/scenario/scenario-page').then((page) => page.ScenarioPage),
+        loadChildren: () => import('./features/scenario/scenario.routes').then((part) => part.scenarioRoutes),
       },
       {
         path: 'account',

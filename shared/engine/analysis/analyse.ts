@@ -24,6 +24,9 @@ import { type SearchSpace, searchSpace } from './search-variables';
 import { AnswerFormat } from './two-sided-answers';
 import { worstPoint } from './worst-point';
 
+/** What is known of a result while the rest is still being computed. */
+export type AnswersSoFar = Pick<Result, 'nominal' | 'bands' | 'largestPayload' | 'rating'>;
+
 export interface AnalysisOptions {
   /** `sha256:` and the hash of the study's canonical text: the caller hashes, the engine has no such means. */
   readonly studyHash: string;
@@ -31,6 +34,13 @@ export interface AnalysisOptions {
   readonly clock: () => number;
   /** Whether the map is computed too. */
   readonly map: boolean;
+  /**
+   * Told the answers that a hand waits for as soon as they are known: first without the rating where that needs
+   * searches of its own, then with it. The verdict told here comes from a search of the bands as they stand, since
+   * the band stretch is not known yet: its failing point may be another than the result's. The result is the same
+   * with and without, `work` aside.
+   */
+  readonly onAnswer?: (known: AnswersSoFar) => void;
 }
 
 /** What an answer with the nominal point failing looks like. */
@@ -114,13 +124,22 @@ class Analysis {
     const largest = hasPayload
       ? yield* this.orFailing(failing, () => search.payload(this.searchedUpTo))
       : undefined;
+    const largestPayload = largest && format.largest(largest, this.searchedUpTo);
+    const { onAnswer } = options;
+    const asTheyStand = onAnswer && (yield* this.orFailing(failing, () => search.bands()));
+    const known = asTheyStand && {
+      nominal,
+      bands: this.bandsAnswer(format, asTheyStand),
+      largestPayload: largestPayload ?? null,
+    };
+    if (known !== undefined && this.hasRatingSearches) onAnswer?.(known);
+    const rating = largestPayload && (yield* this.rating(largestPayload));
+    if (known !== undefined) onAnswer?.({ ...known, ...(rating && { rating }) });
     const smallest = hasPayload
       ? yield* this.orFailing(failing, () => search.payload(this.searchedDownTo))
       : undefined;
     const stretch = yield* this.orFailing(failing, () => search.stretch());
-    const bands = yield* this.verdict(search, format, failing, stretch);
-    const largestPayload = largest && format.largest(largest, this.searchedUpTo);
-    const rating = largestPayload && (yield* this.rating(largestPayload));
+    const bands = yield* this.verdict(search, format, stretch, asTheyStand);
     const delay = this.delay(largest ?? stretch, nominal.phaseMargin);
     const map =
       options.map && study.map !== undefined
@@ -155,24 +174,34 @@ class Analysis {
     return failing === undefined ? yield* search() : { ...NOTHING, contact: failing };
   }
 
-  /** The band stretch decides the verdict unless factor 1 lies between its two sides. */
+  /**
+   * The band stretch decides the verdict unless factor 1 lies between its two sides.
+   *
+   * @param asTheyStand the search of the bands, where it has been made already
+   */
   private *verdict(
     search: AnswerSearch,
     format: AnswerFormat,
-    failing: Contact | undefined,
     stretch: TwoSided,
+    asTheyStand: TwoSided | undefined,
   ): Generator<void, BandsAnswer> {
-    const snap = (point: Float64Array): void => snapToUnits(this.study.parameters, this.space, point);
-    if (failing !== undefined) return format.failing(worstPoint(failing, this.space, snap));
     const { contact, provedTo } = stretch;
-    if (contact !== undefined && contact.objective <= 1)
-      return format.failing(worstPoint(contact, this.space, snap));
+    if (contact !== undefined && contact.objective <= 1) return this.bandsAnswer(format, stretch);
     if (provedTo !== undefined && provedTo >= 1)
       return format.bands({ ...stretch, contact: undefined, openShare: undefined });
-    const bands = yield* search.bands();
-    return bands.contact === undefined
-      ? format.bands(bands)
-      : format.failing(worstPoint(bands.contact, this.space, snap));
+    return this.bandsAnswer(format, asTheyStand ?? (yield* search.bands()));
+  }
+
+  /** The verdict from a search, its failing point moved to where the requirement is missed most. */
+  private bandsAnswer(format: AnswerFormat, answer: TwoSided): BandsAnswer {
+    if (answer.contact === undefined) return format.bands(answer);
+    const snap = (point: Float64Array): void => snapToUnits(this.study.parameters, this.space, point);
+    return format.failing(worstPoint(answer.contact, this.space, snap));
+  }
+
+  private get hasRatingSearches(): boolean {
+    const { rating, payload } = this.study;
+    return payload !== undefined && rating?.tests.some(({ requirements }) => requirements) === true;
   }
 
   private *rating(largest: UpwardAnswer): Generator<void, RatingAnswer | undefined> {

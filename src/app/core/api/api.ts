@@ -1,6 +1,6 @@
 import { HttpClient } from '@angular/common/http';
 import { Injectable, inject } from '@angular/core';
-import { firstValueFrom } from 'rxjs';
+import { firstValueFrom, fromEvent, takeUntil } from 'rxjs';
 import { Refusal } from './refusal';
 import type { Schema } from './schema';
 
@@ -11,9 +11,15 @@ type Method = 'GET' | 'POST' | 'PUT' | 'PATCH' | 'DELETE';
 export class Api {
   private readonly http = inject(HttpClient);
 
-  /** Does something and reads the answer. */
-  async send<T>(method: Method, path: string, answer: Schema<T>, body?: unknown): Promise<T> {
-    const read = await this.request(method, path, body);
+  /** Does something and reads the answer. Where `until` is aborted before it came, the request ends and fails. */
+  async send<T>(
+    method: Method,
+    path: string,
+    answer: Schema<T>,
+    body?: unknown,
+    until?: AbortSignal,
+  ): Promise<T> {
+    const read = await this.request(method, path, body, until);
     try {
       return answer.parse(read);
     } catch (error) {
@@ -26,9 +32,12 @@ export class Api {
     await this.request(method, path, body);
   }
 
-  private async request(method: Method, path: string, body: unknown): Promise<unknown> {
+  private async request(method: Method, path: string, body: unknown, until?: AbortSignal): Promise<unknown> {
     try {
-      return await firstValueFrom(this.http.request<unknown>(method, path, { body, responseType: 'json' }));
+      const answer = this.http.request<unknown>(method, path, { body, responseType: 'json' });
+      return await firstValueFrom(
+        until === undefined ? answer : answer.pipe(takeUntil(fromEvent(until, 'abort'))),
+      );
     } catch (error) {
       throw Refusal.of(error);
     }

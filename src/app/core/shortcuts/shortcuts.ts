@@ -1,17 +1,25 @@
 import { DOCUMENT, DestroyRef, Injectable, inject, signal } from '@angular/core';
 
 export interface Shortcut {
-  /** Keys pressed one after another, as `KeyboardEvent.key` names them: "g p". */
+  /**
+   * Keys pressed one after another, as `KeyboardEvent.key` names them: "g p"; or keys held together: "Ctrl+Shift+Z",
+   * where Ctrl also stands for the command key.
+   */
   readonly keys: string;
   readonly what: string;
   readonly act: () => void;
+  /** It also acts while something is typed. */
+  readonly whileTyping?: boolean;
 }
 
 const KEY = 'tareline-shortcuts';
 /** How long a sequence may rest before it is forgotten. */
 const PATIENCE_MILLISECONDS = 1200;
 
-/** Shortcuts of single keys. They can be switched off, and never act while something is typed. */
+/**
+ * Shortcuts of the keyboard. Those of single keys can be switched off. None acts while something is typed, unless it
+ * says so: there, Ctrl+Z is the field's own.
+ */
 @Injectable({ providedIn: 'root' })
 export class Shortcuts {
   private readonly known = signal<readonly Shortcut[]>([]);
@@ -41,7 +49,8 @@ export class Shortcuts {
   }
 
   private press(event: KeyboardEvent): void {
-    if (!this.enabled() || event.ctrlKey || event.metaKey || event.altKey || event.repeat) return;
+    if (event.ctrlKey || event.metaKey) return this.pressTogether(event);
+    if (!this.enabled() || event.altKey || event.repeat) return;
     if (isTyping(event.target) || event.key.length !== 1) return;
     const patient = event.timeStamp - this.pressedAt < PATIENCE_MILLISECONDS;
     const keys = patient && this.pressed !== '' ? `${this.pressed} ${event.key}` : event.key;
@@ -49,6 +58,15 @@ export class Shortcuts {
     this.pressed = shortcut === undefined ? event.key : '';
     this.pressedAt = event.timeStamp;
     if (shortcut === undefined) return;
+    event.preventDefault();
+    shortcut.act();
+  }
+
+  private pressTogether(event: KeyboardEvent): void {
+    if (event.altKey || event.key.length !== 1) return;
+    const keys = `Ctrl+${event.shiftKey ? 'Shift+' : ''}${event.key.toUpperCase()}`;
+    const shortcut = this.known().find((candidate) => candidate.keys === keys);
+    if (shortcut === undefined || (isTyping(event.target) && shortcut.whileTyping !== true)) return;
     event.preventDefault();
     shortcut.act();
   }

@@ -1,111 +1,126 @@
-import { DOCUMENT, ChangeDetectionStrategy, Component, computed, inject, linkedSignal } from '@angular/core';
-import { toSignal } from '@angular/core/rxjs-interop';
+import { DOCUMENT, ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
 import { MatDialog } from '@angular/material/dialog';
-import { ActivatedRoute, Router } from '@angular/router';
-import { firstValueFrom, map } from 'rxjs';
-import { studySchema } from '../../../../shared/contracts';
 import {
-  listedRevisionSchema,
-  runSchema,
-  scenarioRevisionSchema,
-  scenarioSchema,
-  type Run,
-  type Scenario,
-  type ScenarioRevision,
-} from '../../../../shared/contracts/api';
-import { Cautions, mayDesign, RUN_STATE_WORDS } from '../../core/answers';
-import { Api, listOf, loaded } from '../../core/api';
+  Router,
+  RouterLink,
+  RouterLinkActive,
+  RouterOutlet,
+  type IsActiveMatchOptions,
+} from '@angular/router';
+import { firstValueFrom } from 'rxjs';
+import type { Study } from '../../../../shared/contracts';
+import type { Run, Scenario, ScenarioRevision } from '../../../../shared/contracts/api';
+import { Cautions, RUN_STATE_WORDS } from '../../core/answers';
 import { Notices } from '../../core/notices';
 import { pageHead } from '../../core/page';
 import { pageShortcuts } from '../../core/shortcuts';
-import { MomentView } from '../../core/words';
-import { confirm } from '../../ui/dialog';
+import { momentText, MomentView } from '../../core/words';
+import { StudyDescription } from '../../forms/study-description';
 import { Empty, WhenLoaded } from '../../ui/states';
 import { answersOf } from './answers/answers-of';
 import { AnswersPanel } from './answers/answers-panel';
 import { download, fileName } from './keeping/download';
+import { DraftConflict } from './keeping/draft-conflict';
 import { ImportStudy, type ImportStudyData } from './keeping/import-study';
-import { RevisionList } from './keeping/revision-list';
-import { watchRun } from './run-watch';
-import { StudyView } from './study/study-view';
+import { SaveRevision, type SaveRevisionData } from './keeping/save-revision';
+import { studyChanges } from './keeping/study-changes';
+import { DraftKeeper } from './store/draft-keeper';
+import { LiveAnswers } from './store/live-answers';
+import { SCENARIO_ADDRESS, scenarioAddress } from './store/scenario-address';
+import { ScenarioStore } from './store/scenario-store';
+import { shownRanges } from './store/shown-ranges';
 
+/** The working page: description, map and tolerances, answers; around them what is done with the scenario. */
 @Component({
   selector: 'app-scenario',
-  imports: [AnswersPanel, Cautions, Empty, MomentView, RevisionList, StudyView, WhenLoaded],
+  imports: [
+    AnswersPanel,
+    Cautions,
+    DraftConflict,
+    Empty,
+    MomentView,
+    RouterLink,
+    RouterLinkActive,
+    RouterOutlet,
+    StudyDescription,
+    WhenLoaded,
+  ],
+  providers: [
+    { provide: SCENARIO_ADDRESS, useFactory: scenarioAddress },
+    DraftKeeper,
+    LiveAnswers,
+    ScenarioStore,
+  ],
   templateUrl: './scenario-page.html',
   styleUrl: './scenario-page.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class ScenarioPage {
-  private readonly api = inject(Api);
   private readonly dialogs = inject(MatDialog);
   private readonly document = inject(DOCUMENT);
   private readonly notices = inject(Notices);
-  private readonly route = inject(ActivatedRoute);
   private readonly router = inject(Router);
 
-  private readonly scenarioId = toSignal(
-    this.route.paramMap.pipe(map((params) => params.get('scenarioId') ?? '')),
-    { requireSync: true },
-  );
-  /** The revision that the address asks for; the newest where it asks for none. */
-  private readonly asked = toSignal(this.route.queryParamMap.pipe(map((query) => query.get('revision'))), {
-    requireSync: true,
-  });
-  private readonly path = computed(() => `/api/scenarios/${this.scenarioId()}`);
+  protected readonly store = inject(ScenarioStore);
+  protected readonly exactPath: IsActiveMatchOptions = {
+    ...{ paths: 'exact', queryParams: 'ignored', fragment: 'ignored', matrixParams: 'ignored' },
+  };
 
-  protected readonly scenario = loaded(() => this.path(), scenarioSchema, 'this scenario');
-  protected readonly revisions = loaded(
-    () => `${this.path()}/revisions`,
-    listOf(listedRevisionSchema),
-    'the revisions of this scenario',
-  );
-  protected readonly older = loaded(
-    () => (this.asked() === null ? undefined : `${this.path()}/revisions/${this.asked()}`),
-    scenarioRevisionSchema,
-    'this revision',
-  );
-  protected readonly revision = computed(() =>
-    this.asked() === null ? this.scenario.value()?.head : this.older.value(),
-  );
-  protected readonly study = computed(() => {
-    const read = studySchema.safeParse(this.revision()?.study);
-    return read.success ? read.data : undefined;
-  });
-
-  /** The newest run of the shown revision: the one just asked for, or the one that the revision came with. */
-  private readonly runId = linkedSignal(() => this.revision()?.run?.id);
-  protected readonly watch = watchRun(
-    () => this.runId(),
-    () => this.reload(),
-  );
-  /** The newest run with an answer: while it is renewed, the old one stays. */
-  protected readonly answered = linkedSignal<{ revision: string; run: Run | undefined }, Run | undefined>({
-    source: () => ({
-      revision: `${this.scenarioId()} ${this.revision()?.number}`,
-      run: this.watch.run.value(),
-    }),
-    computation: ({ revision, run }, previous) => {
-      if (run?.result) return run;
-      return previous?.source.revision === revision ? previous.value : undefined;
-    },
-  });
   protected readonly answers = computed(() => {
-    const result = this.answered()?.result;
-    const study = this.study();
-    return result && study ? answersOf(result, study, this.revision()?.run ?? undefined) : undefined;
+    const shown = this.store.shown();
+    if (shown === undefined) return undefined;
+    const { result, study, by } = shown;
+    if (by === 'run') return answersOf(result, study, this.store.revision()?.run ?? undefined);
+    const rated = shownRanges(shown)?.rated;
+    return answersOf(result, study, rated && { ratedLow: rated.low, ratedHigh: rated.high });
   });
-
-  protected readonly mayDesign = computed(() => mayDesign(this.scenario.value()?.role));
+  protected readonly hasOwnDraft = computed(() => this.store.mayDesign() && this.store.hasChanges());
+  /** A draft is run by saving it. */
+  protected readonly mayRun = computed(
+    () => this.store.mayDesign() && (this.store.isOlder() || !this.store.hasChanges()),
+  );
+  protected readonly conflict = computed(() => {
+    const keeping = this.store.keeping();
+    return keeping.kind === 'conflict' ? keeping : undefined;
+  });
+  /** Nothing about the answer is under way: it may be read out. */
+  protected readonly isSettled = computed(() => {
+    const shown = this.store.shown();
+    return shown !== undefined && !shown.renewing && !shown.partial && shown.by !== 'browser';
+  });
+  protected readonly keepingText = computed(() => {
+    const keeping = this.store.keeping();
+    switch (keeping.kind) {
+      case 'none':
+        return '';
+      case 'saving':
+        return 'saving the draft …';
+      case 'saved':
+        return 'draft saved';
+      case 'conflict':
+        return 'draft not saved';
+      case 'failed':
+        return `draft not saved: ${keeping.text}`;
+    }
+  });
+  protected readonly sourceText = computed(() => {
+    const shown = this.store.shown();
+    if (shown?.by === 'run') return runText(this.store.answered());
+    if (shown?.by === 'server') return 'Of your draft, confirmed by the server. Not saved yet.';
+    const confirmation = this.store.confirmation();
+    return confirmation.kind === 'failed'
+      ? `Of your draft, computed in this browser, not confirmed: ${confirmation.text}`
+      : 'Of your draft, computed in this browser; the server confirms it when your hand rests.';
+  });
   protected readonly progressText = computed(() => {
-    const state = this.watch.run.value()?.state;
+    const state = this.store.watch.run.value()?.state;
     if (state !== 'running') return state === undefined ? '' : RUN_STATE_WORDS[state];
-    return `Running, ${Math.floor(this.watch.progress() * 100)}\u2009%`;
+    return `Running, ${Math.floor(this.store.watch.progress() * 100)}\u2009%`;
   });
 
   constructor() {
     pageHead(() => {
-      const scenario = this.scenario.value();
+      const scenario = this.store.scenario.value();
       return {
         title: scenario === undefined ? '' : `${scenario.name}, ${scenario.variantName}`,
         trail:
@@ -118,21 +133,47 @@ export class ScenarioPage {
               ],
       };
     });
-    pageShortcuts([{ keys: 'r', what: 'Run this scenario', act: () => void this.run() }]);
+    pageShortcuts([
+      { keys: 'r', what: 'Run this scenario', act: () => void this.run() },
+      { keys: 'Ctrl+Z', what: 'Undo', act: () => this.store.undo() },
+      { keys: 'Ctrl+Shift+Z', what: 'Redo', act: () => this.store.redo() },
+      { keys: 'Ctrl+S', what: 'Save and run', act: () => void this.save(), whileTyping: true },
+    ]);
+  }
+
+  protected describe(study: Study): void {
+    this.store.edit(
+      (present) => (present === study ? present : study),
+      describedAct(this.store.study(), study),
+    );
   }
 
   protected async run(): Promise<void> {
-    const revision = this.revision();
-    if (revision === undefined || !this.mayDesign() || this.watch.busy()) return;
-    await this.notices.during(async () => {
-      const run = await this.api.send('POST', `${this.path()}/revisions/${revision.number}/runs`, runSchema);
-      this.runId.set(run.id);
-    });
+    if (this.mayRun()) await this.notices.during(() => this.store.run());
   }
 
   protected async cancel(run: Run): Promise<void> {
-    await this.notices.during(() => this.api.act('POST', `/api/runs/${run.id}/cancel`));
-    this.watch.run.reload();
+    await this.notices.during(() => this.store.cancelRun(run));
+  }
+
+  protected async save(): Promise<void> {
+    const study = this.store.study();
+    if (study === undefined || !this.hasOwnDraft() || this.store.isOlder()) return;
+    if (this.dialogs.openDialogs.length > 0) return;
+    await this.store.flush();
+    const data: SaveRevisionData = {
+      path: this.store.path(),
+      base: { number: this.store.baseRevision(), study: this.store.baseStudy() },
+      study,
+    };
+    const dialog = this.dialogs.open<SaveRevision, SaveRevisionData, ScenarioRevision>(SaveRevision, {
+      data,
+      width: '34rem',
+    });
+    const saved = await firstValueFrom(dialog.afterClosed());
+    if (saved === undefined) return;
+    this.notices.say(`Saved as revision ${saved.number}.`);
+    await this.notices.during(() => this.store.saved(saved));
   }
 
   protected async importStudy(scenario: Scenario): Promise<void> {
@@ -144,33 +185,30 @@ export class ScenarioPage {
     const saved = await firstValueFrom(dialog.afterClosed());
     if (saved === undefined) return;
     this.notices.say(`Saved as revision ${saved.number}.`);
-    this.reload();
-    await this.router.navigate([], { relativeTo: this.route, queryParams: {} });
+    this.store.reload();
+    await this.router.navigate(['/scenarios', scenario.id, 'record']);
   }
 
+  /** What is on the page: the draft where there is one, else the revision that is shown. */
   protected exportStudy(scenario: Scenario, revision: ScenarioRevision): void {
-    const name = fileName(`${scenario.variantName} ${scenario.name} ${revision.number}`, 'json');
-    const text = `${JSON.stringify(revision.study, null, 2)}\n`;
-    download(this.document, name, 'application/json', text);
+    const isDraft = this.hasOwnDraft() && !this.store.isOlder();
+    const study: unknown = isDraft ? this.store.study() : revision.study;
+    const state = isDraft ? `${revision.number} draft` : String(revision.number);
+    const name = fileName(`${scenario.variantName} ${scenario.name} ${state}`, 'json');
+    download(this.document, name, 'application/json', `${JSON.stringify(study, null, 2)}\n`);
   }
+}
 
-  protected async remove(scenario: Scenario): Promise<void> {
-    const sure = await confirm(this.dialogs, {
-      title: `Delete ${scenario.name}?`,
-      text: 'Its revisions and runs go with it and cannot be brought back.',
-      act: 'Delete scenario',
-    });
-    if (!sure) return;
-    const done = await this.notices.during(
-      () => this.api.act('DELETE', this.path()),
-      `${scenario.name} is deleted.`,
-    );
-    if (done) await this.router.navigate(['/variants', scenario.variantId]);
-  }
+/** The same places changed again at once are one step: a number that is scrubbed, a word that is typed. */
+function describedAct(before: unknown, after: unknown): { what: string; gesture: string } {
+  const paths = studyChanges(before, after).map(({ path }) => path);
+  const [first = 'the description', ...more] = paths;
+  const what = more.length === 0 ? `change ${first}` : `change ${first} and ${more.length} more`;
+  return { what, gesture: `describe ${paths.join(' ')}` };
+}
 
-  private reload(): void {
-    this.scenario.reload();
-    this.revisions.reload();
-    if (this.asked() !== null) this.older.reload();
-  }
+function runText(run: Run | undefined): string {
+  if (run === undefined) return '';
+  const seconds = run.milliseconds === null ? '' : `, ${(run.milliseconds / 1000).toFixed(2)}\u2009s`;
+  return `Run ${momentText(run.requestedAt)} by ${run.requestedBy}, engine ${run.engine}${seconds}`;
 }

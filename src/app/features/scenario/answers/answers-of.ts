@@ -13,6 +13,7 @@ import {
   type VerdictFacts,
 } from '../../../core/answers';
 import type { GaugeTest, PayloadRanges } from '../../../ui/figures';
+import { rangesOf } from './payload-ranges';
 
 export interface Fact {
   readonly label: string;
@@ -46,7 +47,7 @@ export function answersOf(result: Result, study: Study, rated: Rated): Answers {
   const unit = payload?.unit;
   const approximated = result.delay !== undefined;
   const sampled = (result.largestPayload?.proof ?? result.bands.proof) === 'sampled';
-  const ranges = rangesOf(result, rated);
+  const ranges = rangesOf(result, ratedRange(rated));
   const largest = result.largestPayload;
   const smallest = result.smallestPayload;
   const limiting = largest?.witness === undefined ? smallest : largest;
@@ -67,21 +68,9 @@ export function answersOf(result: Result, study: Study, rated: Rated): Answers {
   };
 }
 
-function rangesOf(result: Result, rated: Rated): PayloadRanges | undefined {
-  const largest = result.largestPayload;
-  const smallest = result.smallestPayload;
-  if (largest === null) return undefined;
-  const low = smallest?.provedTo ?? null;
-  return {
-    rated:
-      rated === undefined || rated.ratedLow === null || rated.ratedHigh === null
-        ? undefined
-        : { low: rated.ratedLow, high: rated.ratedHigh },
-    proved: largest.provedTo === null || low === null ? undefined : { low, high: largest.provedTo },
-    failsAbove: largest.failsAt ?? undefined,
-    failsBelow: largest.provedTo === null ? undefined : (smallest?.failsAt ?? undefined),
-    sampled: largest.proof === 'sampled',
-  };
+function ratedRange(rated: Rated): PayloadRanges['rated'] {
+  if (rated === undefined || rated.ratedLow === null || rated.ratedHigh === null) return undefined;
+  return { low: rated.ratedLow, high: rated.ratedHigh };
 }
 
 function sentenceOf(result: Result, unit: string | undefined, approximated: boolean): string {

@@ -13,6 +13,10 @@ import type { Answers } from './answers-of';
 })
 export class AnswersPanel {
   readonly answers = input.required<Answers>();
+  /** A newer answer is on its way: this one stays, greyed. */
+  readonly renewing = input(false);
+  /** Only what takes longer (light end, band stretch) is on its way. */
+  readonly partial = input(false);
 
   protected readonly gaugeWords = computed(() => {
     const { ranges, unit } = this.answers();

@@ -7,13 +7,12 @@ import {
   scenarioRevisionSchema,
   type ScenarioRevision,
 } from '../../../../../shared/contracts/api';
-import { Api, Refusal } from '../../../core/api';
+import { Api } from '../../../core/api';
 import { submission, validBy } from '../../../core/form';
-import { MomentView } from '../../../core/words';
 import { StudyChoice } from '../../../forms/study-choice';
 import { DialogFrame } from '../../../ui/dialog';
 import { TextField } from '../../../ui/form';
-import { ChangeList } from './change-list';
+import { newerRevision, SavedMeanwhile } from './saved-meanwhile';
 
 export interface ImportStudyData {
   readonly scenarioId: string;
@@ -23,7 +22,7 @@ export interface ImportStudyData {
 /** Saves a study file as the next revision. Where somebody saved meanwhile, shows what they changed first. */
 @Component({
   selector: 'app-import-study',
-  imports: [ChangeList, DialogFrame, MomentView, ReactiveFormsModule, StudyChoice, TextField],
+  imports: [DialogFrame, ReactiveFormsModule, SavedMeanwhile, StudyChoice, TextField],
   template: `
     <form class="form" [formGroup]="form" (ngSubmit)="save()" novalidate>
       <app-dialog-frame title="Import a study">
@@ -33,20 +32,7 @@ export interface ImportStudyData {
         <app-study-choice [(study)]="study" />
         <app-text-field label="Note" hint="What changed, and why" [control]="form.controls.note" />
         @if (newer(); as newer) {
-          <div class="form-fault" role="alert">
-            <p>
-              {{ newer.author }} saved revision {{ newer.number }} meanwhile (<app-moment
-                inSentence
-                [at]="newer.at"
-              />). It changed:
-            </p>
-            <app-change-list [before]="started" [after]="newer.study" />
-            @if (study(); as own) {
-              <p>Yours changes:</p>
-              <app-change-list [before]="started" [after]="own" />
-            }
-            <p>Both stay: yours becomes revision {{ newer.number + 1 }} if you save again.</p>
-          </div>
+          <app-saved-meanwhile [newer]="newer" [started]="started" [own]="study()" />
         }
         <button dialogActs type="submit" class="button main" [attr.aria-disabled]="submission.sending()">
           Save as revision {{ base().number + 1 }}
@@ -89,11 +75,4 @@ export class ImportStudy {
       }
     });
   }
-}
-
-/** What somebody else saved, where that is why the save was refused. */
-function newerRevision(error: unknown): ScenarioRevision | undefined {
-  if (!(error instanceof Refusal) || error.status !== 409) return undefined;
-  const read = scenarioRevisionSchema.safeParse(error.problem?.current);
-  return read.success ? read.data : undefined;
 }

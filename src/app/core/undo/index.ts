@@ -1,0 +1,1 @@
+export { beginHistory, did, redone, undone, type Act, type History } from './history';

@@ -1,0 +1,1 @@
+export { Lane, type LaneChange, type LaneRange } from './lane';
