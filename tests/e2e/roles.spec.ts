@@ -9,8 +9,8 @@ const site = useSite();
 
 const EXAMPLE = 'lift-table-plate';
 
-/** Sorting the ladder, and taking a study away. */
-const HARMLESS = /^(Variant|Proved.*|Reserve|First to go|Export study)$/;
+/** Sorting the ladder, taking a study away, looking closer at the map and at what is said of a parameter. */
+const HARMLESS = /^(Variant|Proved.*|Reserve|First to go|Export study|Zoom (in|out)|More of .*)$/;
 
 describe.each(['viewer', 'reviewer'] as const)('a %s', (role) => {
   it('sees everything, is offered nothing that changes it, and is refused it', async () => {
@@ -51,10 +51,20 @@ describe.each(['viewer', 'reviewer'] as const)('a %s', (role) => {
       .getByText(/^Proved to /)
       .first()
       .waitFor();
-    await page.getByRole('row', { name: /Belt .* 180 to 240/ }).waitFor();
+    await page.getByRole('group', { name: 'Belt', exact: true }).getByText('180 to 240\u2009kN/m').waitFor();
+    await page.getByRole('img', { name: /^Map with / }).waitFor();
     expect(await acts()).toEqual([]);
+    expect(await page.getByRole('slider').count()).toBe(0);
+    const description = page.getByRole('region', { name: 'Description', exact: true });
+    await description.getByText('Belt damping').waitFor();
+    expect(await description.getByRole('textbox').count()).toBe(0);
+    expect(await description.getByRole('combobox').count()).toBe(0);
     // Nor does the key that runs a scenario for a designer.
     await page.keyboard.press('r');
+
+    await page.getByRole('link', { name: 'Record' }).click();
+    await page.getByRole('row', { name: /Belt .* 180 to 240/ }).waitFor();
+    expect(await acts()).toEqual([]);
 
     await page.goto('/people');
     await heading(page, 'This page is for administrators').waitFor();
