@@ -1,5 +1,6 @@
 import { payloadFamily } from '../../shared/engine/contact/search-family';
-import { BernsteinKernel } from '../../shared/engine/polynomial/bernstein-kernel';
+import type { BernsteinKernel } from '../../shared/engine/polynomial/bernstein-kernel';
+import { ExclusionTest } from '../../shared/engine/polynomial/exclusion-test';
 import type { Example } from './examples';
 import { StudySearch } from './study-search';
 import { finish, median, timed } from './timing';
@@ -15,6 +16,18 @@ type Kernel = Pick<BernsteinKernel, 'length' | 'excludes' | 'split' | 'splitDime
   /** Undefined where no radii are kept that could tell. */
   isNoise?: BernsteinKernel['isNoise'];
 };
+
+/** The kernel with one direction for all of a box, as the side without radii has it: the same work but for the radii. */
+function jointly(kernel: BernsteinKernel): Kernel {
+  const test = new ExclusionTest(kernel.size, kernel.columns, kernel.shape);
+  return {
+    length: kernel.length,
+    excludes: (box) => test.excludesJointly(box),
+    split: (box, right, dimension) => kernel.split(box, right, dimension),
+    splitDimension: (box, allowed) => kernel.splitDimension(box, allowed),
+    isNoise: (box) => kernel.isNoise(box),
+  };
+}
 
 /** One proof: that a requirement holds up to the proved payload with every other parameter in its band. */
 class Proof {
@@ -76,12 +89,11 @@ function proofsOf({ study }: Example): Pair[] {
   return study.requirements.flatMap((requirement) => {
     const polynomials = model.problem(requirement, searches.widest)?.polynomials;
     if (polynomials === undefined) return [];
-    // Without cuts between the sheets: both sides then do the same work but for the radii.
-    const kernel = new BernsteinKernel({ ...polynomials.kernel.shape, cuts: undefined });
+    const { kernel } = polynomials;
     const root = new Float64Array(kernel.length);
     polynomials.load(root, ranges);
     const plain = new UnguardedKernel(kernel.shape);
-    const guarded = new Proof(kernel, root, wide);
+    const guarded = new Proof(jointly(kernel), root, wide);
     const unguarded = new Proof(plain, root.subarray(0, plain.length), wide);
     const boxes = guarded.run();
     const plainBoxes = unguarded.run();

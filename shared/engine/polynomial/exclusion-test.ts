@@ -46,8 +46,13 @@ export class ExclusionTest {
 
   /** True when the whole box, laid out as in `BernsteinKernel`, is excluded; false proves nothing. */
   excludes(box: Float64Array): boolean {
-    if (this.isDisc) return this.excludesDisc(box) || this.excludesSectors(box);
-    return this.excludesZero(box) || this.excludesHalves(box, 0, this.nodes.length - 1);
+    if (this.excludesJointly(box)) return true;
+    return this.isDisc ? this.excludesSectors(box) : this.excludesHalves(box, 0, this.nodes.length - 1);
+  }
+
+  /** The same by one direction for all of the sheets or of the disc, without cutting them. */
+  excludesJointly(box: Float64Array): boolean {
+    return this.isDisc ? this.excludesDisc(box) : this.excludesZero(box);
   }
 
   private excludesZero(box: Float64Array): boolean {
