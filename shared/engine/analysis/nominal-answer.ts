@@ -38,7 +38,7 @@ export function nominalAnswer(model: LoopModel, space: SearchSpace, law: number)
 
 /** Rounding leaves a pole at 0 somewhere beside it, in any direction: the smallest ones are put where they belong. */
 function moveToOrigin({ closedRe, closedIm, order }: LoopProbe['poles'], count: number): void {
-  for (let moved = 0; moved < count; moved++) {
+  for (let there = zerosAmong(closedRe, closedIm, order); there < count; there++) {
     let least = -1;
     let size = Infinity;
     for (let i = 0; i < order; i++) {
@@ -48,8 +48,7 @@ function moveToOrigin({ closedRe, closedIm, order }: LoopProbe['poles'], count: 
         least = i;
       }
     }
-    const alreadyThere = zerosAmong(closedRe, closedIm, order);
-    if (least < 0 || alreadyThere >= count) return;
+    if (least < 0) return;
     closedRe[least] = 0;
     closedIm[least] = 0;
   }
